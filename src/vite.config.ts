@@ -1,11 +1,12 @@
-import { defineConfig } from 'vitest/config';
+import { defineConfig } from 'vite';
 
 /**
- * Two entries, one bundle each with lazy chunks beside them: the command and the
- * library. pdfjs-dist stays outside, since it finds its worker, character maps
- * and fonts by path.
+ * Two entries, the command and the library, with what is seldom used in chunks
+ * that load only when used. pdfjs-dist stays outside: it finds its worker,
+ * character maps and fonts by path.
  */
 export default defineConfig({
+  publicDir: false,
   build: {
     ssr: true,
     target: 'node20',
@@ -18,5 +19,4 @@ export default defineConfig({
     },
   },
   ssr: { noExternal: true },
-  test: { include: ['test/**/*.test.ts'], testTimeout: 60_000 },
 });

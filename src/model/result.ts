@@ -6,11 +6,12 @@ import type { Span } from './span.ts';
  * The ratio measures of the field by their usual abbreviations; `ratio` where
  * the text does not say which. SHR is a subdistribution hazard ratio, csHR a
  * cause-specific one, POR a prevalence odds ratio, DOR a diagnostic odds ratio,
- * ROR a ratio of odds ratios, GMR a ratio of geometric means.
+ * ROR a ratio of odds ratios, GMR a ratio of geometric means, RRR a relative risk
+ * ratio of a multinomial model.
  */
 export type RatioMeasure =
   | 'OR' | 'HR' | 'RR' | 'IRR' | 'PR' | 'SMR' | 'SIR'
-  | 'SHR' | 'csHR' | 'POR' | 'DOR' | 'ROR' | 'GMR' | 'ratio';
+  | 'SHR' | 'csHR' | 'POR' | 'DOR' | 'ROR' | 'GMR' | 'RRR' | 'ratio';
 
 /** Differences on the scale of the outcome: risk, mean and standardised mean. */
 export type DifferenceMeasure = 'RD' | 'MD' | 'SMD' | 'difference';

@@ -1,0 +1,77 @@
+import { quote } from '../model/index.ts';
+import { findPhrase } from './phrases.ts';
+import type { Token } from './token.ts';
+import { ABBREVIATIONS, type Abbreviation, type Naming, NAMES } from './vocabulary.ts';
+
+/**
+ * What the manuscript's own abbreviations mean. Where it defines one as something
+ * else ("heart rate (HR)"), the abbreviation names no quantity of ours: `undefined`.
+ */
+export type Definitions = ReadonlyMap<string, Abbreviation | undefined>;
+
+/** What an abbreviation means in this manuscript, by how it is printed. */
+export function abbreviated(definitions: Definitions, printed: string): Abbreviation | undefined {
+  return definitions.has(printed) ? definitions.get(printed) : ABBREVIATIONS.get(printed);
+}
+
+/**
+ * Finds where abbreviations are defined.
+ *
+ * ```
+ * prevalence ratio (PR)   rate ratio [RR]   adjusted odds ratio (aOR)   heart rate (HR)
+ *                   ^^                ^^                         ^^^                ^^
+ * ```
+ */
+export function findDefinitions(text: string, blocks: readonly (readonly Token[])[]): Definitions {
+  const definitions = new Map<string, Abbreviation | undefined>();
+  for (const tokens of blocks) {
+    for (let at = 1; at + 1 < tokens.length; at++) {
+      const token = tokens[at] as Token;
+      if (token.kind !== 'word' || tokens[at - 1]?.kind !== 'open') continue;
+      const closes = tokens[at + 1]?.kind;
+      if (closes === 'close' || closes === 'comma' || closes === 'semicolon') {
+        define(definitions, text, tokens, at);
+      }
+    }
+  }
+  return definitions;
+}
+
+function define(
+  definitions: Map<string, Abbreviation | undefined>,
+  text: string,
+  tokens: readonly Token[],
+  at: number,
+): void {
+  const printed = quote(text, (tokens[at] as Token).span);
+  if (printed.length < 2 || printed.length > 6 || !/^[A-Za-z]*[A-Z]/.test(printed)) return;
+  const naming = nameBefore(tokens, at - 1);
+  if (naming !== undefined) {
+    const known = ABBREVIATIONS.get(printed)?.adjusted;
+    definitions.set(printed, known === undefined ? { naming } : { naming, adjusted: known });
+  } else if (ABBREVIATIONS.has(printed) && !definitions.has(printed)) {
+    if (spellsOut(tokens, at - 1, printed)) definitions.set(printed, undefined);
+  }
+}
+
+/** The firm name of a quantity whose last word stands right before token `end`. */
+function nameBefore(tokens: readonly Token[], end: number): Naming | undefined {
+  for (let start = Math.max(0, end - 6); start < end; start++) {
+    if (tokens[start]?.kind !== 'word') continue;
+    const found = findPhrase(NAMES, tokens, start);
+    if (found?.end === end && found.meaning.firm) return found.meaning;
+  }
+  return undefined;
+}
+
+/** Whether the words before spell the letters out: "partial response (PR)". */
+function spellsOut(tokens: readonly Token[], end: number, printed: string): boolean {
+  const letters = printed.replace(/s$/, '').toLowerCase();
+  let at = end - 1;
+  for (let index = letters.length - 1; index >= 0; index--) {
+    while (tokens[at]?.kind === 'dash') at--;
+    if (tokens[at]?.kind !== 'word' || tokens[at]?.word[0] !== letters[index]) return false;
+    at--;
+  }
+  return true;
+}

@@ -1,0 +1,106 @@
+import { cover, quote } from '../../model/index.ts';
+import { abbreviated, type Definitions } from '../definitions.ts';
+import { findPhrase } from '../phrases.ts';
+import type { Token } from '../token.ts';
+import { type Abbreviation, NAMES } from '../vocabulary.ts';
+import type { NameItem, Recognised } from './item.ts';
+
+/**
+ * The name of a quantity that begins at token `at`.
+ *
+ * ```
+ * odds ratio   Odds-ratio   aHR   ORs   HRTreatment   mean difference   AUC   hazard ratio (HR)
+ * ```
+ */
+export function readName(
+  text: string,
+  tokens: readonly Token[],
+  at: number,
+  definitions: Definitions,
+): Recognised<NameItem> | undefined {
+  const token = tokens[at] as Token;
+  const phrase = findPhrase(NAMES, tokens, at);
+  if (phrase !== undefined && (phrase.end > at + 1 || phrase.meaning.quantity.kind !== 'ratio')) {
+    const { end, adjusted } = skipAbbreviation(text, tokens, phrase.end, definitions);
+    return named({ naming: phrase.meaning, ...adjusted }, tokens, at, end);
+  }
+  const short = readAbbreviation(text, tokens, at, definitions);
+  if (short !== undefined) return named(short, tokens, at, at + 1);
+  if (phrase === undefined || token.word.length < 3) return undefined;
+  return named({ naming: phrase.meaning }, tokens, at, phrase.end);
+}
+
+function named(
+  { naming, adjusted }: Abbreviation,
+  tokens: readonly Token[],
+  at: number,
+  end: number,
+): Recognised<NameItem> {
+  const first = tokens[at] as Token;
+  const span = cover(first.span, (tokens[end - 1] as Token).span);
+  const said = adjusted === undefined ? {} : { adjusted };
+  return { item: { kind: 'name', span, spaced: first.spaced, naming, ...said }, end };
+}
+
+// odds ratio (OR)   hazard ratio [HR]   adjusted odds ratio (aOR)
+//            ^^^^                ^^^^                      ^^^^^
+function skipAbbreviation(
+  text: string,
+  tokens: readonly Token[],
+  at: number,
+  definitions: Definitions,
+): { readonly end: number; readonly adjusted: { readonly adjusted?: boolean } } {
+  const none = { end: at, adjusted: {} };
+  if (tokens[at]?.kind !== 'open' || tokens[at + 2]?.kind !== 'close') return none;
+  const token = tokens[at + 1] as Token;
+  if (token.kind !== 'word') return none;
+  const short = abbreviated(definitions, quote(text, token.span));
+  if (short === undefined) return none;
+  const said = short.adjusted === undefined ? {} : { adjusted: short.adjusted };
+  return { end: at + 3, adjusted: said };
+}
+
+function readAbbreviation(
+  text: string,
+  tokens: readonly Token[],
+  at: number,
+  definitions: Definitions,
+): Abbreviation | undefined {
+  const token = tokens[at] as Token;
+  const printed = quote(text, token.span);
+  const short = abbreviated(definitions, printed) ?? withSubscript(definitions, printed);
+  if (short === undefined) return lowerCase(tokens, at);
+  if (isReceptor(tokens, at) || tokens[at - 1]?.kind === 'slash') return undefined;
+  if (printed === 'OR' && standsAmongCapitals(text, tokens, at)) return undefined;
+  return short;
+}
+
+// HRTreatment   ORMH   HRadj
+// ^^            ^^     ^^
+function withSubscript(definitions: Definitions, printed: string): Abbreviation | undefined {
+  const letters = /^(a?(?:OR|HR|RR|IRR|PR))(?:[A-Z][a-z]{2,}|MH|M-H|mv|uv|int)$/.exec(printed);
+  return letters === null ? undefined : abbreviated(definitions, letters[1] as string);
+}
+
+const LOWER_CASE: Readonly<Record<string, string>> = { or: 'OR', hr: 'HR', rr: 'RR', aor: 'aOR' };
+
+/** "or=2.3" in small letters, told by the sign that follows. */
+function lowerCase(tokens: readonly Token[], at: number): Abbreviation | undefined {
+  const letters = LOWER_CASE[(tokens[at] as Token).word];
+  if (letters === undefined || tokens[at + 1]?.relation !== '=') return undefined;
+  if (tokens[at + 2]?.kind !== 'number') return undefined;
+  return abbreviated(new Map(), letters);
+}
+
+/** "HR-positive", "PR+", "HR status": a receptor, not a ratio. */
+function isReceptor(tokens: readonly Token[], at: number): boolean {
+  const next = tokens[at + 1];
+  const word = next?.kind === 'dash' ? tokens[at + 2]?.word : next?.word;
+  return word === 'positive' || word === 'negative' || word === 'status' || next?.word === '+';
+}
+
+function standsAmongCapitals(text: string, tokens: readonly Token[], at: number): boolean {
+  const isCapital = (token: Token | undefined) => token?.kind === 'word'
+    && /^\p{Lu}{3,}$/u.test(quote(text, token.span));
+  return isCapital(tokens[at - 1]) && isCapital(tokens[at + 1]);
+}

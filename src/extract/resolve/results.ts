@@ -1,0 +1,104 @@
+import { cover, type Inheritable, type Interval, type Result, type Span } from '../../model/index.ts';
+import type { Draft } from '../parse/draft.ts';
+import type { Item, PValueItem } from '../parse/item.ts';
+import type { Passage } from '../parse/passage.ts';
+import type { Naming } from '../vocabulary.ts';
+import { adjustmentOf } from './adjustment.ts';
+import { type Before, type Resolved, resolveNaming } from './naming.ts';
+import { assignPValues } from './p-values.ts';
+
+/** What a result may inherit from outside its own block. */
+export interface Customs {
+  /** The level that the manuscript states for its intervals, where it states just one. */
+  readonly level?: number;
+  /** The ratio measure that the manuscript uses, where it uses just one. */
+  readonly naming?: Naming;
+}
+
+/** Turns the drafts of a passage into results: what they are values of, level, p, adjustment. */
+export function resolveResults(
+  passage: Passage,
+  drafts: readonly Draft[],
+  customs: Customs,
+): readonly Result[] {
+  const pValues = assignPValues(passage, drafts);
+  const results: Result[] = [];
+  let before: Before | undefined;
+  let level: number | undefined;
+  for (const draft of drafts) {
+    level = draft.label?.level ?? level;
+    const common = draft.estimate?.percent === true ? undefined : customs.naming;
+    const resolved = resolveNaming(passage, draft, before, common);
+    if (resolved !== undefined) before = { draft, resolved };
+    const p = pValues.get(draft);
+    const result = makeResult(passage, draft, resolved, p, level ?? customs.level);
+    if (result !== undefined) results.push(result);
+  }
+  return results;
+}
+
+function makeResult(
+  passage: Passage,
+  draft: Draft,
+  resolved: Resolved | undefined,
+  pAt: number | undefined,
+  level: number | undefined,
+): Result | undefined {
+  const p = pAt === undefined ? undefined : (passage.items[pAt] as PValueItem);
+  const interval = intervalOf(draft, level);
+  const adjusted = adjustmentOf(passage, draft, resolved?.name);
+  const inferred: Inheritable[] = [];
+  if (resolved?.inherited) inferred.push('measure');
+  if (interval?.level !== undefined && draft.label?.level === undefined) inferred.push('level');
+  const common = {
+    span: spanOf(passage, draft, pAt),
+    about: {},
+    ...(adjusted === undefined ? {} : { adjusted }),
+    inferred,
+    counts: [],
+    ...(interval === undefined ? {} : { interval }),
+    ...(p === undefined ? {} : { p: p.value }),
+    cited: false,
+  };
+  const estimate = draft.estimate === undefined ? {} : { estimate: draft.estimate };
+  const quantity = resolved?.naming.quantity ?? { kind: 'other', measure: 'other' };
+  switch (quantity.kind) {
+    case 'ratio':
+    case 'difference':
+    case 'other':
+      return { ...common, ...estimate, ...quantity } as Result;
+    case 'proportion':
+      return { ...common, ...estimate, kind: 'proportion' };
+    case 'coefficient':
+      return draft.estimate === undefined
+        ? undefined
+        : { ...common, kind: 'coefficient', estimate: draft.estimate };
+    case 'discrimination':
+      return draft.estimate === undefined
+        ? undefined
+        : { ...common, ...quantity, estimate: draft.estimate };
+    default:
+      return quantity satisfies never;
+  }
+}
+
+function intervalOf({ limits, label }: Draft, level: number | undefined): Interval | undefined {
+  if (limits === undefined) return undefined;
+  return {
+    lower: limits.lower,
+    upper: limits.upper,
+    ...(level === undefined ? {} : { level }),
+    type: label?.type ?? 'confidence',
+    span: label === undefined ? limits.span : cover(label.span, limits.span),
+  };
+}
+
+/** From the first to the last printed number of the result; a p-value further off stays out. */
+function spanOf(passage: Passage, draft: Draft, pAt: number | undefined): Span {
+  const { items } = passage;
+  const parts: Span[] = [(items[draft.anchor] as Item).span];
+  if (draft.limits !== undefined) parts.push(draft.limits.span);
+  const isClose = pAt !== undefined && Math.abs(pAt - draft.end) <= 8;
+  if (isClose) parts.push((items[pAt] as Item).span);
+  return cover(parts[0] as Span, ...parts.slice(1));
+}

@@ -22,7 +22,7 @@ export interface NumberContext {
   readonly style: NumberStyle;
   /** Whether a power of ten may stand without a mantissa, as after "P <": "10⁻⁵", "10-5". */
   readonly barePower: boolean;
-  /** Whether a space may have crept in behind the decimal point, as after "RR": "1. 71". */
+  /** Whether a space may have crept in behind the decimal point, as after "RR": "1. 71". A lone zero ("0. 99") needs no such leave. */
   readonly split: boolean;
 }
 
@@ -102,7 +102,8 @@ function startOfFraction(context: NumberContext, point: number): number | undefi
     || (style.decimalComma && kind === CharacterClass.comma);
   if (!isPoint || point + 1 >= limit) return undefined;
   if (isDigit(text, point + 1)) return point + 1;
-  if (!context.split || text[point + 1] !== ' ' || !isDigit(text, point + 2)) return undefined;
+  const isSplit = context.split || (point > 0 && text[point - 1] === '0' && !isDigit(text, point - 2));
+  if (!isSplit || text[point + 1] !== ' ' || !isDigit(text, point + 2)) return undefined;
   return point + 2;
 }
 

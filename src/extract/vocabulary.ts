@@ -102,7 +102,7 @@ export const NAMES = phrasebook<Naming>([
   ['median | medians | median survival | median overall survival', other('median')],
   ['mean | means | average | geometric mean', other('mean')],
   ['incidence rate | mortality rate | incidence | rate | rates | event rate', other('rate')],
-  ['number needed to treat | number needed to harm | heritability | i squared | kappa | icc '
+  ['number needed to treat | number needed to harm | number needed | numbers needed | heritability | i squared | kappa | icc '
     + '| intraclass correlation | intraclass correlation coefficient', other('other', true)],
   ['correlation | correlation coefficient | pearson correlation | spearman correlation '
     + '| correlation coefficients | correlations | rank correlation', other('correlation', true)],
@@ -193,7 +193,7 @@ function formsOf(letters: string): readonly (readonly [string, boolean | undefin
 
 /** Words that say how an interval was made; the label "95% CI" in all its forms. */
 export const INTERVAL_NAMES = phrasebook<'confidence' | 'credible'>([
-  ['ci | cis | cl | cls | confidence interval | confidence intervals | confidence limit '
+  ['ci | ic | cis | cl | cls | confidence interval | confidence intervals | confidence limit '
     + '| confidence limits | confidence bounds | confidence range | conf interval | c i '
     + '| confidence intervalls | confidence interval limits | fiducial limits | confident interval '
     + '| confidence internal | confidential interval | confidence level | conﬁdence interval '

@@ -20,7 +20,7 @@ export function readIntervalLabel(
   const before = first.kind === 'number' ? levelOf(first) : undefined;
   if (first.kind === 'number' && before === undefined) return undefined;
   const start = before === undefined ? at : afterLevel(tokens, at + 1);
-  const named = start === undefined ? undefined : readName(text, tokens, start, before !== undefined);
+  const named = readName(text, tokens, start, before !== undefined);
   if (named === undefined) return undefined;
   const after = before === undefined ? readTrailingLevel(tokens, named.end) : undefined;
   const end = skipRepetition(tokens, after?.end ?? named.end);
@@ -79,6 +79,9 @@ function readName(
   if (dotted !== undefined) return { type: 'confidence', end: dotted };
   const found = findPhrase(INTERVAL_NAMES, tokens, at);
   if (found === undefined) return undefined;
+  if (token.word === 'ic' && !hasLevel && readTrailingLevel(tokens, found.end) === undefined) {
+    return undefined;
+  }
   if (found.end === at + 1 && !isAbbreviation(quote(text, token.span), hasLevel)) return undefined;
   return { type: found.meaning, end: found.end };
 }
@@ -92,7 +95,7 @@ function readDotted(tokens: readonly Token[], at: number): number | undefined {
 
 /** "CI" in capitals; "ci", or "Cl" with a small L, only where a level stands before. */
 function isAbbreviation(printed: string, hasLevel: boolean): boolean {
-  if (/^(CI|CIs|CI['’]s|CrI|CrIs|CRI|HPD|HDI|BCI|UI)$/.test(printed)) return true;
+  if (/^(CI|CIs|IC|CI['’]s|CrI|CrIs|CRI|HPD|HDI|BCI|UI)$/.test(printed)) return true;
   return hasLevel;
 }
 

@@ -1,7 +1,8 @@
 import type { Draft } from './draft.ts';
-import type { Item, LabelItem, NumberItem } from './item.ts';
+import type { Item, LabelItem, NameItem, NumberItem } from './item.ts';
 import { type Pair, pairAt } from './pair.ts';
-import type { Passage } from './passage.ts';
+import { isUnitWord } from './unit.ts';
+import { lookBack, type Passage } from './passage.ts';
 
 /**
  * Finds every interval of a passage with the estimate it belongs to.
@@ -98,11 +99,15 @@ function followsName(items: readonly Item[], label: number): boolean {
   return items[before]?.kind === 'name';
 }
 
-/** The pair that stands right behind the number at `at`, in a bracket or after a comma. */
+/**
+ * The pair that stands right behind the number at `at`: in a bracket, even over a
+ * unit ("9·6 months [8·6–11·2]"), or after a comma.
+ */
 function pairBehind(items: readonly Item[], at: number): Pair | undefined {
-  const next = items[at + 1];
+  const isUnit = isUnitWord(items[at + 1]) && items[at + 2]?.kind === 'open';
+  const next = items[at + (isUnit ? 2 : 1)];
   if (next?.kind === 'open') {
-    const pair = pairAt(items, at + 2);
+    const pair = pairAt(items, at + (isUnit ? 3 : 2));
     if (pair === undefined) return undefined;
     return pair.joint === 'range' || closesAt(items, pair.end) ? pair : undefined;
   }
@@ -123,8 +128,33 @@ function labelled(
   { index, label }: LabelPlace,
   free: number,
 ): Draft {
-  const estimate = estimateBefore(passage, index, free);
-  return draftOf(passage.items, estimate, pair, label, index);
+  const behind = estimateBehindInterval(passage, index, pair);
+  const estimate = behind ?? estimateBefore(passage, index, free);
+  const draft = draftOf(passage.items, estimate, pair, label, index);
+  return behind === undefined ? draft : { ...draft, start: index, end: behind + 1 };
+}
+
+/**
+ * The estimate that follows its interval in one bracket, where none stands before.
+ *
+ * ```
+ * (P = 0.01; CI, 1.30-6.66; risk ratio, 2.94)
+ *                ^^^^^^^^^              ^^^^
+ * ```
+ */
+function estimateBehindInterval(
+  { items, groups }: Passage,
+  label: number,
+  { end }: Pair,
+): number | undefined {
+  const group = groups[label] ?? -1;
+  if (group < 0 || items[end]?.kind !== 'semicolon' || items[end + 1]?.kind !== 'name') return undefined;
+  for (let at = group + 1; at < label; at++) {
+    const kind = items[at]?.kind;
+    if (kind === 'number' || kind === 'name') return undefined;
+  }
+  const at = items[end + 2]?.kind === 'number' ? end + 2 : end + 3;
+  return items[at]?.kind === 'number' && pairAt(items, at) === undefined ? at : undefined;
 }
 
 function draftOf(
@@ -160,19 +190,20 @@ const REACH = 16;
 function estimateBefore(passage: Passage, label: number, free: number): number | undefined {
   const { items, sentences } = passage;
   let words = 0;
+  let measuring: number | undefined;
+  let isNamed = false;
   for (let at = label - 1; at >= free && words <= REACH; at--) {
     const item = items[at] as Item;
-    if (sentences[at] !== sentences[label] && words > 0) return undefined;
-    if (item.kind === 'stop' && words > 0) return undefined;
-    if (item.kind === 'label') return undefined;
+    const isOutside = sentences[at] !== sentences[label] || item.kind === 'stop';
+    if (isOutside && words > 0) break;
     if (item.kind === 'word') words++;
-    if (item.kind === 'close') {
-      at = Math.max(free, passage.partners[at] ?? at);
-      continue;
-    }
-    if (item.kind === 'number' && isEstimate(passage, at, words)) return at;
+    isNamed ||= item.kind === 'name';
+    if (item.kind === 'close') at = Math.max(free, passage.partners[at] ?? at);
+    if (item.kind !== 'number' || (item.attached && items[at - 1]?.kind !== 'name')) continue;
+    if ((words === 0 && !isNamed) || !isMeasuring(items, at)) return at;
+    if (words <= 3 && !isNamed) measuring ??= at;
   }
-  return undefined;
+  return measuring;
 }
 
 /** Words that make the number behind them a unit, an age, a time or a size. */
@@ -181,15 +212,12 @@ const MEASURING = new Set(['per', 'each', 'every', 'by', 'at', 'aged', 'age', 'o
   'table', 'figure', 'model', 'group', 'quartile', 'quintile', 'tertile', 'score', 'in', 'during',
   'until', 'since', 'before', 'level', 'class', 'ref', 'version', 'top', 'first', 'last', 'fig']);
 
-function isEstimate({ items }: Passage, at: number, words: number): boolean {
-  const item = items[at] as NumberItem;
+/** Whether a number counts years, doses or ages, so that an estimate stands further back. */
+function isMeasuring(items: readonly Item[], at: number): boolean {
   const before = items[at - 1];
-  if (item.attached && before?.kind !== 'name') return false;
-  if (words === 0) return true;
-  if (before?.kind === 'word' && MEASURING.has(before.word)) return false;
-  if (before?.kind === 'relation' && items[at - 2]?.kind !== 'name') return false;
-  if (isYear(item)) return false;
-  return true;
+  if (before?.kind === 'word' && MEASURING.has(before.word)) return true;
+  if (before?.kind === 'relation' && items[at - 2]?.kind !== 'name') return true;
+  return isYear(items[at] as NumberItem);
 }
 
 function isYear({ printed }: NumberItem): boolean {
@@ -207,14 +235,39 @@ function unlabelled(
   const pair = pairBehind(items, at);
   if (pair === undefined || (item.attached && items[at - 1]?.kind !== 'name')) return undefined;
   if (!looksLikeLimits(item, pair)) return undefined;
-  const bracketed = items[at + 1]?.kind === 'open';
+  const bracketed = items[pair.start - 1]?.kind === 'open';
   if (bracketed && !endsBracket(items, pair.end)) return undefined;
-  if (!bracketed && pair.joint !== 'range') return undefined;
-  const isNamed = namedBefore(items, at);
-  const isListed = announced !== undefined && continuesList(passage, at, announced);
   const isInside = item.printed.value >= pair.lower.value && item.printed.value <= pair.upper.value;
+  if (!bracketed && pair.joint !== 'range' && !(isInside && isMixedList(items, at, pair))) {
+    return undefined;
+  }
+  const isNamed = namedBefore(items, at) || (isInside && isNamedFromAfar(passage, at));
+  const isListed = announced !== undefined && continuesList(passage, at, announced);
   if (!(isNamed || (isListed && (bracketed || isInside)))) return undefined;
   return draftOf(items, at, pair);
+}
+
+// OR 2.94; 1.15, 7.50   but not a list of values: RR = 0.93, 0.84, 0.98, 0.90
+//        ^     ^
+function isMixedList(items: readonly Item[], at: number, { end }: Pair): boolean {
+  return items[at + 1]?.kind !== 'comma' && closesAt(items, end) && items[end + 1]?.kind !== 'number';
+}
+
+// the relative risk of relapse or death was 0.23 (0.07 to 0.72)
+//     ^^^^^^^^^^^^^                             ^^^^  ^^^^^^^^^^^^
+/** Whether the firm name of a ratio stands before in the sentence, with no number between. */
+function isNamedFromAfar(passage: Passage, at: number): boolean {
+  const { items, groups, partners } = passage;
+  const first = Math.max(lookBack(passage, at), at - REACH);
+  for (let index = at - 1; index >= first; index--) {
+    const item = items[index] as Item;
+    if (item.kind === 'close') index = Math.max(first, partners[index] ?? index);
+    else if (item.kind === 'number' && !item.attached) return false;
+    else if (item.kind === 'name' && item.naming.firm && (groups[index] ?? -1) <= (groups[at] ?? -1)) {
+      return item.naming.quantity.kind === 'ratio';
+    }
+  }
+  return false;
 }
 
 /** Limits have decimals, or share a percent sign or the estimate's lack of decimals. */
@@ -239,17 +292,24 @@ const LINKS = new Set(['of', 'was', 'were', 'is', 'are', 'be', 'to', 'being', 'e
   'about', 'as', 'at']);
 
 // OR 2.95   OR=2.95   odds ratio of 2.95   HR was 0.71   OR: 1.2
-/** Whether the name of a quantity stands right before the number. */
+/** Whether the firm name of a quantity stands right before the number. */
 export function namedBefore(items: readonly Item[], at: number): boolean {
+  return nameRightBefore(items, at)?.naming.firm === true;
+}
+
+/** The name of a quantity right before a number; a loose one only in the same bracket. */
+export function nameRightBefore(items: readonly Item[], at: number): NameItem | undefined {
+  let isBracketed = false;
   for (let index = at - 1; index >= Math.max(0, at - 4); index--) {
     const item = items[index] as Item;
-    if (item.kind === 'name') return item.naming.firm;
+    if (item.kind === 'name') return item.naming.firm || !isBracketed ? item : undefined;
+    isBracketed ||= item.kind === 'open';
     const passes = item.kind === 'relation' || item.kind === 'colon' || item.kind === 'comma'
       || item.kind === 'open' || item.kind === 'dash' || item.kind === 'other'
       || (item.kind === 'word' && LINKS.has(item.word));
-    if (!passes) return false;
+    if (!passes) return undefined;
   }
-  return false;
+  return undefined;
 }
 
 /** Whether intervals were announced not long before: in this sentence or the two before it. */

@@ -53,10 +53,11 @@ function asNumber(tokens: readonly Token[], at: number): Item {
   return { kind: 'number', span, spaced, printed, attached };
 }
 
-// 5-year   IL-6   but not: 0.72-0.90   or: HR - 0.72
+// 5-year   IL-6   but not: 0.72-0.90   or: HR - 0.72   or: 1.7-fold
 function isHyphenated(tokens: readonly Token[], at: number): boolean {
   const { spaced } = tokens[at] as Token;
   const [before, dash, next, after] = [tokens[at - 2], tokens[at - 1], tokens[at + 1], tokens[at + 2]];
   if (dash?.kind === 'dash' && !spaced && !dash.spaced && before?.kind === 'word') return true;
-  return next?.kind === 'dash' && !next.spaced && after?.kind === 'word' && !after.spaced;
+  const isCompound = next?.kind === 'dash' && !next.spaced && after?.kind === 'word' && !after.spaced;
+  return isCompound && after.word !== 'fold';
 }

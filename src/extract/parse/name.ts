@@ -20,6 +20,7 @@ export function readName(
 ): Recognised<NameItem> | undefined {
   const token = tokens[at] as Token;
   const phrase = findPhrase(NAMES, tokens, at);
+  if (phrase !== undefined && isRatioWord(tokens[phrase.end])) return namedRatio(tokens, at, phrase.end);
   if (phrase !== undefined && (phrase.end > at + 1 || phrase.meaning.quantity.kind !== 'ratio')) {
     const { end, adjusted } = skipAbbreviation(text, tokens, phrase.end, definitions);
     return named({ naming: phrase.meaning, ...adjusted }, tokens, at, end);
@@ -28,6 +29,17 @@ export function readName(
   if (short !== undefined) return named(short, tokens, at, at + 1);
   if (phrase === undefined || token.word.length < 3) return undefined;
   return named({ naming: phrase.meaning }, tokens, at, phrase.end);
+}
+
+function isRatioWord(token: Token | undefined): boolean {
+  return token?.word === 'ratio' || token?.word === 'ratios';
+}
+
+// response rate ratio   recurrence rate ratios   incidence ratio
+//          ^^^^ ^^^^^
+function namedRatio(tokens: readonly Token[], at: number, end: number): Recognised<NameItem> {
+  const measure = (tokens[end - 1] as Token).word.startsWith('rate') ? 'IRR' : 'ratio';
+  return named({ naming: { quantity: { kind: 'ratio', measure }, firm: true } }, tokens, at, end + 1);
 }
 
 function named(

@@ -1,3 +1,4 @@
+import { nameRightBefore } from '../parse/intervals.ts';
 import type { Item } from '../parse/item.ts';
 import type { Passage } from '../parse/passage.ts';
 import type { Naming } from '../vocabulary.ts';
@@ -9,21 +10,35 @@ import type { Customs } from './results.ts';
  */
 export function customsOf(passages: readonly Passage[]): Customs {
   const levels = new Set<number>();
-  const namings = new Map<string, Naming>();
+  const named = new Map<string, Naming>();
+  const used = new Map<string, Naming>();
   for (const { items } of passages) {
-    for (const item of items) note(item, levels, namings);
+    items.forEach((item, at) => {
+      if (item.kind === 'label' && item.level !== undefined) levels.add(item.level);
+      const ratio = ratioNamed(item);
+      if (ratio !== undefined) named.set(ratio.measure, ratio.naming);
+      const behind = item.kind === 'number' ? nameRightBefore(items, at) : undefined;
+      const value = behind === undefined ? undefined : ratioNamed(behind);
+      if (value !== undefined) used.set(value.measure, value.naming);
+    });
   }
-  const [level, ...otherLevels] = levels;
-  const [naming, ...otherNamings] = namings.values();
+  const level = onlyOne(levels);
+  const naming = onlyOne(used.values()) ?? onlyOne(named.values());
   return {
-    ...(level !== undefined && otherLevels.length === 0 ? { level } : {}),
-    ...(naming !== undefined && otherNamings.length === 0 ? { naming } : {}),
+    ...(level === undefined ? {} : { level }),
+    ...(naming === undefined ? {} : { naming }),
   };
 }
 
-function note(item: Item, levels: Set<number>, namings: Map<string, Naming>): void {
-  if (item.kind === 'label' && item.level !== undefined) levels.add(item.level);
-  if (item.kind !== 'name' || !item.naming.firm) return;
+function onlyOne<Value>(values: Iterable<Value>): Value | undefined {
+  const [first, ...others] = values;
+  return others.length === 0 ? first : undefined;
+}
+
+function ratioNamed(item: Item): { readonly measure: string; readonly naming: Naming } | undefined {
+  if (item.kind !== 'name' || !item.naming.firm) return undefined;
   const { quantity } = item.naming;
-  if (quantity.kind === 'ratio') namings.set(quantity.measure, item.naming);
+  return quantity.kind === 'ratio'
+    ? { measure: quantity.measure, naming: item.naming }
+    : undefined;
 }

@@ -1,7 +1,8 @@
 import type { Draft } from '../parse/draft.ts';
-import { namedBefore } from '../parse/intervals.ts';
+import { nameRightBefore } from '../parse/intervals.ts';
 import type { Item, NameItem } from '../parse/item.ts';
 import { enclosing, lookBack, type Passage } from '../parse/passage.ts';
+import { isUnitWord } from '../parse/unit.ts';
 import type { Naming } from '../vocabulary.ts';
 
 /** What a draft is a value of, and how that was found out. */
@@ -33,38 +34,71 @@ export function resolveNaming(
   common: Naming | undefined,
 ): Resolved | undefined {
   const attached = attachedName(passage, draft);
-  if (attached !== undefined) return { naming: attached.naming, name: attached, inherited: false };
+  if (attached !== undefined) return own(attached, before, common);
   const measured = measuredNaming(passage, draft);
   if (measured !== undefined) return { naming: measured, inherited: false };
   const near = nearestName(passage, draft);
-  if (near?.naming.firm) return { naming: near.naming, name: near, inherited: false };
+  if (near?.naming.firm && fits(near.naming, draft)) return own(near);
+  if (near !== undefined && isLinked(passage, draft)) return own(near, before, common);
   if (before !== undefined && continues(passage, before, draft)) {
     return { ...before.resolved, inherited: true };
   }
-  const anywhere = near ?? nameInBrackets(passage, draft);
-  if (anywhere !== undefined) return { naming: anywhere.naming, name: anywhere, inherited: false };
-  return common === undefined ? undefined : { naming: common, inherited: true };
+  const named = nameInBrackets(passage, draft);
+  if (named !== undefined && fits(named.naming, draft)) return own(named);
+  const inherited = common === undefined || !fits(common, draft)
+    ? undefined
+    : { naming: common, inherited: true };
+  return isRatioLike(passage, draft) ? (inherited ?? A_RATIO) : near === undefined ? inherited : own(near);
+}
+
+/** A name of its own; a bare "ratio" means the ratio that was spoken of before. */
+function own(name: NameItem, before?: Before, common?: Naming): Resolved {
+  const { quantity, firm } = name.naming;
+  if (quantity.kind !== 'ratio' || firm || quantity.measure !== 'ratio') {
+    return { naming: name.naming, name, inherited: false };
+  }
+  const earlier = before?.resolved.naming.quantity.kind === 'ratio' ? before.resolved.naming : common;
+  return { naming: earlier ?? name.naming, name, inherited: earlier !== undefined };
+}
+
+const A_RATIO: Resolved = {
+  naming: { quantity: { kind: 'ratio', measure: 'ratio' }, firm: true },
+  inherited: true,
+};
+
+/** Whether the numbers can be values of it: a ratio is never negative. */
+function fits({ quantity }: Naming, { estimate, limits }: Draft): boolean {
+  if (quantity.kind !== 'ratio') return true;
+  return !((estimate?.value ?? 0) < 0 || (limits?.lower.value ?? 0) < 0);
+}
+
+// the differences in density between the groups were 1.33 (95% CI 0.37-2.30)
+//                                               ^^^^ ^^^^
+function isLinked({ items }: Passage, { anchor }: Draft): boolean {
+  const link = items[anchor - 1];
+  return link?.kind === 'relation' || (link?.kind === 'word' && LINKING.has(link.word));
+}
+
+const LINKING = new Set(['was', 'were', 'is', 'are', 'of', 'by']);
+
+/** No estimate at all, or one followed by "times" or "fold". */
+function isRatioLike({ items }: Passage, draft: Draft): boolean {
+  if (draft.estimate === undefined) return fits(A_RATIO.naming, draft);
+  return [draft.anchor + 1, draft.end, draft.end + 1, draft.end + 2].some((at) => {
+    const item = items[at];
+    return item?.kind === 'word' && (item.word === 'times' || item.word === 'fold');
+  });
 }
 
 // HR 0.72   odds ratio was 1.6   1.27 (SMR
 function attachedName({ items }: Passage, { anchor, end }: Draft): NameItem | undefined {
-  for (let at = anchor - 1; at >= Math.max(0, anchor - 5); at--) {
-    const item = items[at] as Item;
-    if (item.kind === 'name') return namedBefore(items, anchor) ? item : undefined;
-    if (item.kind === 'number' || item.kind === 'close' || item.kind === 'stop') break;
-  }
+  const name = nameRightBefore(items, anchor);
+  if (name !== undefined) return name;
   const behind = items[end];
   return behind?.kind === 'open' && items[end + 1]?.kind === 'name' && items[end + 2]?.kind === 'close'
     ? (items[end + 1] as NameItem)
     : undefined;
 }
-
-const UNITS = new Set(['months', 'month', 'years', 'year', 'yrs', 'weeks', 'week', 'days', 'day',
-  'hours', 'h', 'minutes', 'min', 'mg', 'kg', 'g', 'µg', 'μg', 'ml', 'l', 'mm', 'cm', 'm', 'mmol',
-  'mmhg', 'pmol', 'nmol', 'points', 'point', 'beats', 'units', 'dl', 'bpm', 'pg', 'ng', 'kcal',
-  'events', 'cases', 'deaths', 'persons', 'patients', 'participants', 'subjects', 'mo', 'yr', 'wk',
-  'micromol', 'meq', 'iu', 'kj', 'kpa', 'hz', 'ms', 's', 'sec', 'seconds', 'db', 'copies', 'cells',
-  'visits', 'admissions', 'episodes', 'infections', 'women', 'men', 'children', 'people', 'per']);
 
 const PERCENTAGE: Naming = { quantity: { kind: 'proportion' }, firm: true };
 const AMOUNT: Naming = { quantity: { kind: 'other', measure: 'other' }, firm: true };
@@ -74,13 +108,40 @@ function measuredNaming(passage: Passage, draft: Draft): Naming | undefined {
   const { items } = passage;
   const { estimate, limits, anchor } = draft;
   const percent = estimate?.percent === true || limits?.upper.percent === true;
-  const unit = items[anchor + 1];
-  const isUnit = estimate !== undefined && unit?.kind === 'word' && UNITS.has(unit.word)
-    && unit.word !== 'per';
-  if (!percent && !isUnit) return undefined;
+  const isUnit = estimate !== undefined && isUnitWord(items[anchor + 1]);
   const name = nearestName(passage, draft);
+  const isNamedRatio = name?.naming.firm === true && name.naming.quantity.kind === 'ratio';
+  const isBare = !isNamedRatio && (isWhole(draft) || isChange(items, anchor));
+  if (!percent && !isUnit && !isBare && !isCount(items, draft)) return undefined;
   if (name !== undefined && name.naming.quantity.kind !== 'ratio') return name.naming;
   return percent ? PERCENTAGE : AMOUNT;
+}
+
+const COUNTING = new Set(['more', 'fewer', 'less', 'additional', 'extra']);
+
+const NUMBER_WORDS = new Set(('one two three four five six seven eight nine ten eleven twelve '
+  + 'thirteen fourteen fifteen sixteen seventeen eighteen nineteen twenty thirty forty fifty').split(' '));
+
+// 20 more deaths (95% CI 0-30)   twelve (95% CI 8, 32)
+function isCount(items: readonly Item[], { estimate, anchor, start }: Draft): boolean {
+  const next = items[anchor + 1];
+  if (next?.kind === 'word' && COUNTING.has(next.word)) return true;
+  if (estimate !== undefined) return false;
+  const before = items[start - 1]?.kind === 'open' ? items[start - 2] : items[start - 1];
+  return before?.kind === 'word' && NUMBER_WORDS.has(before.word);
+}
+
+/** Estimate and limits without a decimal between them: "21 (12-79)". */
+function isWhole({ estimate, limits }: Draft): boolean {
+  return [estimate, limits?.lower, limits?.upper].every((number) => number?.decimals === 0);
+}
+
+// rose from 0.40 (0.34-0.47) to 0.74 (0.69-0.80)
+//      ^^^^                  ^^
+function isChange(items: readonly Item[], anchor: number): boolean {
+  const before = items[anchor - 1];
+  if (before?.kind !== 'word' || (before.word !== 'from' && before.word !== 'to')) return false;
+  return before.word === 'from' || items[anchor - 2]?.kind === 'close';
 }
 
 /**
@@ -112,8 +173,8 @@ function nameInBrackets(passage: Passage, { anchor }: Draft): NameItem | undefin
 }
 
 /** Whether a draft is one more of the list that an earlier one began. */
-function continues({ sentences }: Passage, { draft }: Before, next: Draft): boolean {
+function continues({ sentences }: Passage, { draft, resolved }: Before, next: Draft): boolean {
   const gap = (sentences[next.anchor] ?? 0) - (sentences[draft.anchor] ?? 0);
   const alike = draft.estimate?.percent === next.estimate?.percent;
-  return alike && gap <= 2;
+  return alike && gap <= 2 && fits(resolved.naming, next);
 }

@@ -19,6 +19,7 @@ export function assignPValues(
   drafts: readonly Draft[],
 ): ReadonlyMap<Draft, number> {
   const assigned = new Map<Draft, number>();
+  const leading = new Set<number>();
   const { items } = passage;
   let next = 0;
   for (let at = 0; at < items.length; at++) {
@@ -28,9 +29,28 @@ export function assignPValues(
     const [before, behind] = [drafts[next - 1], drafts[next]];
     const owner = ownerOf(passage, at, before, behind, assigned);
     if (owner !== undefined) assigned.set(owner, at);
+    if (owner !== undefined && owner === behind) leading.add(at);
     if (item.shared) share(passage, at, drafts, next, assigned);
   }
+  spread(passage, drafts, assigned, leading);
   return assigned;
+}
+
+/** A p-value that leads a list holds for all of it, where no other is printed there. */
+function spread(
+  passage: Passage,
+  drafts: readonly Draft[],
+  assigned: Map<Draft, number>,
+  leading: ReadonlySet<number>,
+): void {
+  const { sentences, groups } = passage;
+  for (let index = 1; index < drafts.length; index++) {
+    const [before, draft] = [drafts[index - 1] as Draft, drafts[index] as Draft];
+    const at = assigned.get(before);
+    if (at === undefined || !leading.has(at) || assigned.has(draft)) continue;
+    const isAlone = (groups[at] ?? -1) !== (groups[before.anchor] ?? -1);
+    if (isAlone && sentences[draft.anchor] === sentences[at]) assigned.set(draft, at);
+  }
 }
 
 function ownerOf(
@@ -48,7 +68,36 @@ function ownerOf(
     const isOwn = isFree(before) && enclosing(passage, before.end - 1).includes(groupOf(passage, at));
     if (!isOwn) return behind;
   }
-  return isFree(before) && reaches(passage, before, at) ? before : undefined;
+  if (isFree(before) && reaches(passage, before, at)) return before;
+  return isFree(behind) && leadsTo(passage, at, behind) ? behind : undefined;
+}
+
+const TURNS = new Set(['and', 'but', 'while', 'whereas', 'although', 'or', 'nor']);
+
+/** A p-value in a bracket of its own reaches over so many items to a result behind it. */
+const LEAD = 18;
+
+/**
+ * Whether a p-value in a bracket of its own speaks of the result behind it: nothing
+ * turns the sentence between them, and the result has no p-value of its own.
+ *
+ * ```
+ * was lower (p<0.05), giving a prevalence ratio of 0.68 (95% CI 0.57-0.80)
+ *            ^^^^^^                                ^^^^
+ * ```
+ */
+function leadsTo({ items }: Passage, at: number, behind: Draft): boolean {
+  if (behind.anchor - at > LEAD) return false;
+  for (let index = at + 1; index < behind.anchor; index++) {
+    const item = items[index] as Item;
+    if (item.kind === 'semicolon' || item.kind === 'p') return false;
+    if (item.kind === 'number' && !item.printed.percent) return false;
+    if (item.kind === 'word' && TURNS.has(item.word)) return false;
+  }
+  for (let index = behind.start; index < behind.end + 5; index++) {
+    if (items[index]?.kind === 'p') return false;
+  }
+  return true;
 }
 
 function isWithin({ start, end }: Draft, at: number): boolean {

@@ -3,6 +3,7 @@ import { type Definitions, findDefinitions } from './definitions.ts';
 import { lex } from './lex.ts';
 import { numberStyleOf } from './number.ts';
 import { findBareRatios } from './parse/bare-ratios.ts';
+import { findCounts } from './parse/counts.ts';
 import { findIntervals } from './parse/intervals.ts';
 import { readItems } from './parse/items.ts';
 import { type Passage, passageOf } from './parse/passage.ts';
@@ -33,7 +34,8 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
     const drafts = [...intervals, ...bare].sort((a, b) => a.anchor - b.anchor);
     return resolveResults(passage, drafts, customs);
   });
-  return { results, claims: [], counts: [], prevalences: [] };
+  const counts = passages.flatMap(({ items }) => findCounts(text, items));
+  return { results, claims: [], counts, prevalences: [] };
 }
 
 const PROSE: ReadonlySet<Block['kind']> = new Set(['title', 'heading', 'paragraph', 'caption', 'note']);

@@ -1,5 +1,8 @@
 import type { Block, Findings, Manuscript, Result } from '../model/index.ts';
-import { type Definitions, findDefinitions } from './definitions.ts';
+import { outcomeIn } from './about.ts';
+import { findClaims } from './claims/claims.ts';
+import { reachesOf } from './claims/reach.ts';
+import { findDefinitions } from './definitions.ts';
 import { lex } from './lex.ts';
 import { numberStyleOf } from './number.ts';
 import { findBareRatios } from './parse/bare-ratios.ts';
@@ -8,8 +11,10 @@ import { findIntervals } from './parse/intervals.ts';
 import { readItems } from './parse/items.ts';
 import { type Passage, passageOf } from './parse/passage.ts';
 import { customsOf } from './resolve/customs.ts';
-import { resolveResults } from './resolve/results.ts';
+import { prevalencesIn } from './prevalences.ts';
+import { type Customs, resolveResults } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
+import type { Token } from './token.ts';
 
 /**
  * Finds every result, claim, count and prevalence in a manuscript's text.
@@ -28,14 +33,40 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
     passageOf(readItems(text, tokens[index] ?? [], definitions), split(text, span)),
   );
   const customs = customsOf(passages);
-  const results = passages.flatMap((passage): readonly Result[] => {
-    const intervals = findIntervals(passage);
-    const bare = findBareRatios(passage, intervals);
-    const drafts = [...intervals, ...bare].sort((a, b) => a.anchor - b.anchor);
-    return resolveResults(passage, drafts, customs);
-  });
-  const counts = passages.flatMap(({ items }) => findCounts(text, items));
-  return { results, claims: [], counts, prevalences: [] };
+  const found = passages.map((passage, index) =>
+    findingsOf(text, passage, tokens[index] ?? [], customs),
+  );
+  return {
+    results: found.flatMap(({ results }) => results),
+    claims: found.flatMap(({ claims }) => claims),
+    counts: found.flatMap(({ counts }) => counts),
+    prevalences: found.flatMap(({ prevalences }) => prevalences),
+  };
+}
+
+function findingsOf(
+  text: string,
+  passage: Passage,
+  tokens: readonly Token[],
+  customs: Customs,
+): Findings {
+  const intervals = findIntervals(passage);
+  const bare = findBareRatios(passage, intervals);
+  const drafts = [...intervals, ...bare].sort((a, b) => a.anchor - b.anchor);
+  const resolved = resolveResults(passage, drafts, customs);
+  const reaches = reachesOf(passage, tokens, resolved);
+  const results = reaches.map(({ result, before }) => withAbout(text, result, before));
+  return {
+    results,
+    claims: findClaims(reaches.map((reach, index) => ({ ...reach, result: results[index] ?? reach.result }))),
+    counts: findCounts(text, passage.items),
+    prevalences: prevalencesIn(text, tokens),
+  };
+}
+
+function withAbout(text: string, result: Result, before: readonly Token[]): Result {
+  const outcome = outcomeIn(text, before);
+  return outcome === undefined ? result : { ...result, about: { ...result.about, outcome } };
 }
 
 const PROSE: ReadonlySet<Block['kind']> = new Set(['title', 'heading', 'paragraph', 'caption', 'note']);
@@ -43,5 +74,3 @@ const PROSE: ReadonlySet<Block['kind']> = new Set(['title', 'heading', 'paragrap
 function isProse({ kind, section }: Block): boolean {
   return PROSE.has(kind) && section.role !== 'references';
 }
-
-export type { Definitions, Passage };

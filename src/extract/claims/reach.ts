@@ -1,0 +1,101 @@
+import type { Result, Span } from '../../model/index.ts';
+import type { Passage } from '../parse/passage.ts';
+import type { Token } from '../token.ts';
+
+/**
+ * The words that may speak of one result: in its sentence, from the result before
+ * it up to its own end, and for the last result of a sentence what follows too.
+ */
+export interface Reach {
+  readonly result: Result;
+  readonly sentence: Span;
+  /** Whether another result stands before it in the sentence. */
+  readonly follows: boolean;
+  readonly before: readonly Token[];
+  readonly behind: readonly Token[];
+}
+
+/** The reach of each result of a passage, in reading order. */
+export function reachesOf(
+  passage: Passage,
+  tokens: readonly Token[],
+  results: readonly Result[],
+): readonly Reach[] {
+  const words = tokensInSentences(passage, tokens);
+  const bySentence = new Map<number, Result[]>();
+  for (const result of results) {
+    const sentence = sentenceOf(passage, result.span.start);
+    const others = bySentence.get(sentence);
+    if (others === undefined) bySentence.set(sentence, [result]);
+    else others.push(result);
+  }
+  return [...bySentence].flatMap(([sentence, own]) =>
+    own.map((result, index) => reachOf(passage, words[sentence] ?? [], sentence, own, result, index)),
+  );
+}
+
+function reachOf(
+  { sentenceSpans }: Passage,
+  words: readonly Token[],
+  sentence: number,
+  own: readonly Result[],
+  result: Result,
+  index: number,
+): Reach {
+  const from = own[index - 1]?.span.end ?? -1;
+  const isLast = index === own.length - 1;
+  return {
+    result,
+    sentence: sentenceSpans[sentence] ?? result.span,
+    follows: index > 0,
+    before: words.filter(({ span }) => span.start >= from && span.end <= result.span.start),
+    behind: isLast ? words.filter(({ span }) => span.start >= result.span.end) : [],
+  };
+}
+
+function sentenceOf({ sentenceSpans }: Passage, offset: number): number {
+  let low = 0;
+  let high = sentenceSpans.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if ((sentenceSpans[middle] as Span).start <= offset) low = middle + 1;
+    else high = middle;
+  }
+  return low - 1;
+}
+
+function tokensInSentences(passage: Passage, tokens: readonly Token[]): readonly Token[][] {
+  const sentences: Token[][] = passage.sentenceSpans.map(() => []);
+  let sentence = 0;
+  for (const token of tokens) {
+    while ((passage.sentenceSpans[sentence + 1]?.start ?? Infinity) <= token.span.start) sentence++;
+    sentences[sentence]?.push(token);
+  }
+  return sentences;
+}
+
+const TURNS = new Set(['but', 'whereas', 'while', 'although', 'though', 'however', 'yet', 'except']);
+
+/**
+ * The clause nearest to the result: what stands behind the last word that turns
+ * the sentence. Says also whether such a turn was found.
+ */
+export function lastClause(tokens: readonly Token[]): readonly Token[] {
+  for (let at = tokens.length - 1; at >= 0; at--) {
+    const token = tokens[at] as Token;
+    if (token.kind === 'semicolon' || TURNS.has(token.word)) return tokens.slice(at + 1);
+  }
+  return tokens;
+}
+
+/** The clause that follows a result: up to a semicolon or a new subject. */
+export function firstClause(tokens: readonly Token[]): readonly Token[] {
+  const end = tokens.findIndex(({ kind, word }) => kind === 'semicolon'
+    || (TURNS.has(word) && word !== 'but') || word === 'and');
+  return end < 0 ? tokens : tokens.slice(0, end);
+}
+
+/** Whether a clause begins with a word that turns away from what was said before. */
+export function turnsAway(tokens: readonly Token[]): boolean {
+  return tokens.some(({ kind, word }) => kind === 'semicolon' || TURNS.has(word));
+}

@@ -1,0 +1,101 @@
+import { cover, type SignificanceClaim, type Span } from '../../model/index.ts';
+import type { Token } from '../token.ts';
+
+/** What a clause says of significance, with the words that say it. */
+export interface SaidOfSignificance {
+  readonly asserted: boolean;
+  readonly manner: SignificanceClaim['manner'];
+  readonly span: Span;
+}
+
+const NEGATIONS = new Set(['no', 'not', 'non', 'neither', 'nor', 'without', 'never', 'lacked', 'lack',
+  'cannot', 'failed', 'none', "didn't", "wasn't", "weren't", 'absence', 'loses', 'lost', 'fails']);
+
+const SIGNIFICANT = new Set(['significant', 'significantly', 'significance']);
+
+/** Words that weaken a claim of significance until it is none. */
+const WEAKENING = new Set(['borderline', 'marginally', 'marginal', 'near', 'nearly', 'almost', 'approached',
+  'approaching', 'clinically', 'clinical', 'towards', 'trend', 'practical', 'public', 'if', 'whether']);
+
+const INSIGNIFICANT = new Set(['insignificant', 'insignificantly', 'nonsignificant', 'nonsignificantly', 'ns']);
+
+const ASSOCIATION = new Set(('association associations associated relationship relation related '
+  + 'difference differences differ differed effect effects impact influence influenced correlation '
+  + 'correlated evidence increase increased increases change changed benefit improve improved reduce '
+  + 'reduced reduces predict predicted predictive predictor predictors affect affected linked link').split(' '));
+
+const SAMENESS = new Set(['unrelated', 'unaffected', 'unchanged', 'similar', 'comparable']);
+
+const IMPLYING = new Set(('associated association associations predict predicted predicts predictor '
+  + 'predictors predictive increased increase increases increasing decreased decrease decreases reduced '
+  + 'reduction reduces reduce higher lower greater improved improves improvement longer shorter protective '
+  + 'elevated related correlated worse better likelier favored favoured favoring favouring superior '
+  + 'prolonged likely doubled halved protected raised determinants determinant linked risk').split(' '));
+
+/**
+ * What the words of a clause say of significance, the nearest to the end first.
+ * Stated significance outweighs a denied association, and that an implied one.
+ *
+ * ```
+ * was not significantly associated with      no association was found      increased the risk
+ *     ^^^^^^^^^^^^^^^^^                      ^^^^^^^^^^^^^^                ^^^^^^^^^
+ * ```
+ */
+export function significanceIn(tokens: readonly Token[]): SaidOfSignificance | undefined {
+  return stated(tokens) ?? denied(tokens) ?? implied(tokens);
+}
+
+function stated(tokens: readonly Token[]): SaidOfSignificance | undefined {
+  for (let at = tokens.length - 1; at >= 0; at--) {
+    const token = tokens[at] as Token;
+    if (INSIGNIFICANT.has(token.word)) return said(false, 'stated', token.span);
+    if (!SIGNIFICANT.has(token.word)) continue;
+    if (wordsBefore(tokens, at, 3).some(({ word }) => WEAKENING.has(word))) return undefined;
+    const negation = wordsBefore(tokens, at, 5).find(({ word }) => NEGATIONS.has(word));
+    if (negation !== undefined) return said(false, 'stated', cover(negation.span, token.span));
+    if (token.word === 'significance') continue;
+    return said(true, 'stated', token.span);
+  }
+  return undefined;
+}
+
+function denied(tokens: readonly Token[]): SaidOfSignificance | undefined {
+  for (let at = tokens.length - 1; at >= 0; at--) {
+    const token = tokens[at] as Token;
+    if (SAMENESS.has(token.word)) return said(false, 'no association', token.span);
+    if (!ASSOCIATION.has(token.word)) continue;
+    const negation = wordsBefore(tokens, at, 4).find(({ word }) => NEGATIONS.has(word));
+    if (negation !== undefined) return said(false, 'no association', cover(negation.span, token.span));
+    return undefined;
+  }
+  return undefined;
+}
+
+function implied(tokens: readonly Token[]): SaidOfSignificance | undefined {
+  for (let at = tokens.length - 1; at >= 0; at--) {
+    const token = tokens[at] as Token;
+    if (!IMPLYING.has(token.word)) continue;
+    const isNegated = wordsBefore(tokens, at, 4).some(({ word }) => NEGATIONS.has(word));
+    return isNegated ? undefined : said(true, 'implied', token.span);
+  }
+  return undefined;
+}
+
+function said(
+  asserted: boolean,
+  manner: SignificanceClaim['manner'],
+  span: Span,
+): SaidOfSignificance {
+  return { asserted, manner, span };
+}
+
+/** The words that stand before, up to so many, not over a comma or a bracket's end. */
+function wordsBefore(tokens: readonly Token[], at: number, count: number): readonly Token[] {
+  const words: Token[] = [];
+  for (let index = at - 1; index >= 0 && words.length < count; index--) {
+    const token = tokens[index] as Token;
+    if (token.kind === 'comma' || token.kind === 'close' || token.kind === 'semicolon') break;
+    if (token.kind === 'word') words.push(token);
+  }
+  return words;
+}

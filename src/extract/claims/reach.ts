@@ -1,4 +1,4 @@
-import type { Result, Span } from '../../model/index.ts';
+import { cover, type Result, type Span } from '../../model/index.ts';
 import type { Passage } from '../parse/passage.ts';
 import type { Token } from '../token.ts';
 
@@ -42,15 +42,24 @@ function reachOf(
   result: Result,
   index: number,
 ): Reach {
-  const from = own[index - 1]?.span.end ?? -1;
+  const previous = own[index - 1];
+  const from = previous === undefined ? -1 : numbersOf(previous).end;
   const isLast = index === own.length - 1;
+  const { start, end } = numbersOf(result);
   return {
     result,
     sentence: sentenceSpans[sentence] ?? result.span,
     follows: index > 0,
-    before: words.filter(({ span }) => span.start >= from && span.end <= result.span.start),
-    behind: isLast ? words.filter(({ span }) => span.start >= result.span.end) : [],
+    before: words.filter(({ span }) => span.start >= from && span.end <= start),
+    behind: isLast ? words.filter(({ span }) => span.start >= end) : [],
   };
+}
+
+/** Where the estimate and interval stand; words may come between them and the p-value. */
+function numbersOf({ estimate, interval, span }: Result): Span {
+  const parts = [estimate?.span, interval?.span].filter((part) => part !== undefined);
+  const [first, ...others] = parts;
+  return first === undefined ? span : cover(first, ...others);
 }
 
 function sentenceOf({ sentenceSpans }: Passage, offset: number): number {
@@ -78,7 +87,7 @@ const TURNS = new Set(['but', 'whereas', 'while', 'although', 'though', 'however
 
 /**
  * The clause nearest to the result: what stands behind the last word that turns
- * the sentence. Says also whether such a turn was found.
+ * the sentence, or behind a semicolon.
  */
 export function lastClause(tokens: readonly Token[]): readonly Token[] {
   for (let at = tokens.length - 1; at >= 0; at--) {
@@ -95,7 +104,7 @@ export function firstClause(tokens: readonly Token[]): readonly Token[] {
   return end < 0 ? tokens : tokens.slice(0, end);
 }
 
-/** Whether a clause begins with a word that turns away from what was said before. */
-export function turnsAway(tokens: readonly Token[]): boolean {
-  return tokens.some(({ kind, word }) => kind === 'semicolon' || TURNS.has(word));
+/** Whether the sentence turns on the way to a result, so that lists end there. */
+export function hasTurn(tokens: readonly Token[]): boolean {
+  return tokens.some(({ word }) => TURNS.has(word));
 }

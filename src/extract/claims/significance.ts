@@ -30,7 +30,8 @@ const IMPLYING = new Set(('associated association associations predict predicted
   + 'predictors predictive increased increase increases increasing decreased decrease decreases reduced '
   + 'reduction reduces reduce higher lower greater improved improves improvement longer shorter protective '
   + 'elevated related correlated worse better likelier favored favoured favoring favouring superior '
-  + 'prolonged likely doubled halved protected raised determinants determinant linked risk').split(' '));
+  + 'prolonged likely doubled halved protected raised determinants determinant linked independent independently factors more less '
+  + 'reductions effective advantage durable favorable favourable').split(' '));
 
 /**
  * What the words of a clause say of significance, the nearest to the end first.

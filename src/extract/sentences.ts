@@ -31,11 +31,32 @@ export async function loadSentenceSplitter(): Promise<SentenceSplitter> {
   for (const word of ABBREVIATIONS) nlp.model().one.abbreviations[word] = true;
   const world = nlp.world();
   const { splitSentences } = nlp.methods().one.tokenize;
-  return (text, span) => {
+  return (text, span) => portions(text, span).flatMap((portion) => {
     // A line end inside a paragraph is a space; the replacement keeps every offset.
-    const flat = text.slice(span.start, span.end).replace(/[\n\r]/g, ' ');
-    return place(splitSentences(flat, world), flat, span.start);
-  };
+    const flat = text.slice(portion.start, portion.end).replace(/[\n\r]/g, ' ');
+    return place(splitSentences(flat, world), flat, portion.start);
+  });
+}
+
+/** No sentence is longer, in characters: what goes on beyond is cut at a space. */
+const LONGEST = 4000;
+
+/**
+ * A block cut into portions that the splitter takes well, since its cost grows with
+ * the square of what it is given. Cuts fall behind a full stop where there is one.
+ */
+function portions(text: string, { start, end }: Span): readonly Span[] {
+  const cut: Span[] = [];
+  let from = start;
+  while (end - from > LONGEST) {
+    const window = text.slice(from, from + LONGEST);
+    const stop = window.lastIndexOf('. ') + 1;
+    const space = window.lastIndexOf(' ') + 1;
+    const to = from + (stop > LONGEST / 2 ? stop : space > LONGEST / 2 ? space : LONGEST);
+    cut.push({ start: from, end: to });
+    from = to;
+  }
+  return [...cut, { start: from, end }];
 }
 
 /** Gives the pieces back their offsets; whatever lies between two pieces joins the first. */

@@ -133,7 +133,9 @@ function readNumber(scan: Scan, start: number, digits: number): number {
   const { limit, raised } = markAt(scan, digits);
   const introduced = previous?.kind === 'relation' || INTRODUCES.has(previous?.word ?? '');
   const barePower = previous?.relation !== undefined && last(scan, 2)?.word === 'p';
-  const context = { text, limit, style, barePower, split: introduced };
+  const isSize = last(scan, 2)?.word === 'n' && previous?.relation === '=';
+  const spacedThousands = previous?.kind === 'slash' || previous?.word === 'of' || isSize;
+  const context = { text, limit, style, barePower, split: introduced, spacedThousands };
   const number = scanNumber(context, start, digits);
   const { span } = number;
   const end = endWithPercent(text, span.end, scan.end);

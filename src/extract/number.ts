@@ -24,6 +24,8 @@ export interface NumberContext {
   readonly barePower: boolean;
   /** Whether a space may have crept in behind the decimal point, as after "RR": "1. 71". A lone zero ("0. 99") needs no such leave. */
   readonly split: boolean;
+  /** Whether a plain space may part thousands, as in a total: "151/10 080", "of 10 080". */
+  readonly spacedThousands: boolean;
 }
 
 /**
@@ -77,11 +79,12 @@ function isGroup(text: string, at: number, limit: number): boolean {
 
 const THIN_SPACES = '\u2009\u202f\u00a0\u2008\u2006\u2005';
 
-function separatesThousands({ text, style }: NumberContext, at: number): boolean {
+function separatesThousands(context: NumberContext, at: number): boolean {
+  const { text, style } = context;
   const character = text[at];
   if (character === undefined) return false;
   if (character === ',' || character === '，') return !style.decimalComma;
-  return THIN_SPACES.includes(character);
+  return THIN_SPACES.includes(character) || (character === ' ' && context.spacedThousands);
 }
 
 // 1,234,567   but not 0,123   and not 12,1234

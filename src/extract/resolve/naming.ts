@@ -84,7 +84,7 @@ const LINKING = new Set(['was', 'were', 'is', 'are', 'of', 'by']);
 /** No estimate at all, or one followed by "times" or "fold". */
 function isRatioLike({ items }: Passage, draft: Draft): boolean {
   if (draft.estimate === undefined) return fits(A_RATIO.naming, draft);
-  return [draft.anchor + 1, draft.end, draft.end + 1, draft.end + 2].some((at) => {
+  return [1, 2].flatMap((step) => [draft.anchor + step, draft.end + step - 1]).some((at) => {
     const item = items[at];
     return item?.kind === 'word' && (item.word === 'times' || item.word === 'fold');
   });

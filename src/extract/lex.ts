@@ -68,7 +68,7 @@ function step(scan: Scan, at: number): number {
       scan.spaced = true;
       return at + 1;
     case CharacterClass.letter:
-      return readWord(scan, at);
+      return readEndless(scan, at) ?? readWord(scan, at);
     case CharacterClass.digit:
       return readNumber(scan, at, at);
     case CharacterClass.point:
@@ -152,6 +152,28 @@ function readNumber(scan: Scan, start: number, digits: number): number {
   return end;
 }
 
+const ENDLESS = /^(?:infinity|infinite|inf)(?![\p{L}.])/iu;
+
+// 1.54 to infinity   0.00-∞
+//         ^^^^^^^^        ^
+function readEndless(scan: Scan, at: number): number | undefined {
+  if (scan.text.charCodeAt(at) !== 0x69 || last(scan)?.kind === 'word' && last(scan)?.word !== 'to') {
+    return undefined;
+  }
+  const word = ENDLESS.exec(scan.text.slice(at, at + 10))?.[0];
+  return word === undefined ? undefined : pushEndless(scan, at, at + word.length);
+}
+
+function pushEndless(scan: Scan, start: number, end: number): number {
+  const span = { start, end };
+  const text = scan.text.slice(start, end);
+  const printed = { text, plain: '∞', value: Infinity, decimals: 0, percent: false, span };
+  const { spaced } = scan;
+  scan.tokens.push({ kind: 'number', span, word: '', spaced, glued: false, printed, relation: undefined });
+  scan.spaced = false;
+  return end;
+}
+
 /** Where reading must stop because a raised mark begins, or whether it is one. */
 function markAt(scan: Scan, at: number): { readonly limit: number; readonly raised: boolean } {
   const { marks } = scan;
@@ -219,14 +241,16 @@ const RELATIONS: Readonly<Record<string, Relation>> = {
 function readRelation(scan: Scan, at: number): number {
   const { text } = scan;
   const first = RELATIONS[text[at] as string] ?? '=';
-  const orEqual = /^\s*(?:or\s*(?:=|equal to)|=|<|>)/.exec(text.slice(at + 1, at + 16));
-  const second = orEqual === null ? undefined : orEqual[0].trim();
-  const end = orEqual === null ? at + 1 : at + 1 + orEqual[0].length;
-  return push(scan, 'relation', at, end, text[at] as string, combine(first, second));
+  const more = /^(\s*)(or\s*(?:=|equal to)|[=<>≤≥])/.exec(text.slice(at + 1, at + 16));
+  if (more === null) return push(scan, 'relation', at, at + 1, text[at] as string, first);
+  const end = at + 1 + more[0].length;
+  const second = more[2] as string;
+  // "P = < 0.01" says "less than"; "=<" without a space says "at most".
+  const replaced = more[1] !== '' && first === '=' ? RELATIONS[second] : undefined;
+  return push(scan, 'relation', at, end, text[at] as string, replaced ?? combine(first, second));
 }
 
-function combine(first: Relation, second: string | undefined): Relation {
-  if (second === undefined) return first;
+function combine(first: Relation, second: string): Relation {
   if (first === '<' || second === '<') return '<=';
   if (first === '>' || second === '>') return '>=';
   return first;
@@ -252,6 +276,7 @@ function readOther(scan: Scan, at: number): number {
   let end = at;
   while (end < scan.end && superscriptDigit(text.charCodeAt(end)) >= 0) end++;
   if (end > at) return push(scan, 'raised', at, end, text.slice(at, end));
+  if (text[at] === '∞') return pushEndless(scan, at, at + 1);
   return push(scan, 'other', at, at + 1, text[at] as string);
 }
 

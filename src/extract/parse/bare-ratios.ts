@@ -40,8 +40,28 @@ function isRatioNumber(items: readonly Item[], at: number): boolean {
   if (item?.kind !== 'number' || item.printed.percent) return false;
   if (item.attached && items[at - 1]?.kind !== 'name') return false;
   const { value, decimals } = item.printed;
-  if (value < 0 || (decimals === 0 && value >= 100)) return false;
+  if (value < 0 || (decimals === 0 && !isLinkedWhole(items, at))) return false;
+  if (isSpread(items, at + 1) || isBound(items[at - 1])) return false;
   return pairAt(items, at)?.joint !== 'range' && pairAt(items, at - 2)?.joint !== 'range';
+}
+
+// an odds ratio of 3   OR = 3   but not: OR 3 (an enumeration, a reference)
+function isLinkedWhole(items: readonly Item[], at: number): boolean {
+  const [link, number] = [items[at - 1], items[at] as NumberItem];
+  const isLink = link?.kind === 'relation' || (link?.kind === 'word' && VERBS.has(link.word));
+  return isLink && number.printed.value < 100;
+}
+
+// 16.0 ± 6.6   16.0 +/- 6.6
+//      ^            ^^^
+function isSpread(items: readonly Item[], at: number): boolean {
+  const item = items[at];
+  return item?.kind === 'plus-minus' || (item?.kind === 'other' && item.word === '+');
+}
+
+/** "HR < 1.176" states a margin, not a result. */
+function isBound(item: Item | undefined): boolean {
+  return item?.kind === 'relation' && item.relation !== '=';
 }
 
 function isNamedRatio(passage: Passage, at: number): boolean {

@@ -18,11 +18,13 @@ export function readIntervalLabel(
 ): Recognised<LabelItem> | undefined {
   const first = tokens[at] as Token;
   const before = first.kind === 'number' ? levelOf(first) : undefined;
-  if (first.kind === 'number' && before === undefined) return undefined;
-  const start = before === undefined ? at : afterLevel(tokens, at + 1);
-  const named = readName(text, tokens, start, before !== undefined);
+  if (first.kind === 'number' && first.printed?.percent !== true && before === undefined) return undefined;
+  const start = first.kind === 'number' ? afterLevel(tokens, at + 1) : at;
+  if (first.printed?.percent !== true && tokens[at + 1]?.kind === 'comma' && start > at) return undefined;
+  const named = readName(text, tokens, start, before !== undefined)
+    ?? (before === undefined ? undefined : unnamed(tokens, at));
   if (named === undefined) return undefined;
-  const after = before === undefined ? readTrailingLevel(tokens, named.end) : undefined;
+  const after = readTrailingLevel(tokens, named.end);
   const end = skipRepetition(tokens, after?.end ?? named.end);
   const level = before ?? after?.level;
   return {
@@ -54,7 +56,8 @@ function afterLevel(tokens: readonly Token[], at: number): number {
   let next = at;
   for (; next < at + 5; next++) {
     const token = tokens[next];
-    if (token?.kind !== 'dash' && !KINDS_OF_INTERVAL.has(token?.word ?? '')) break;
+    const passes = token?.kind === 'dash' || (token?.kind === 'comma' && next === at);
+    if (!passes && !KINDS_OF_INTERVAL.has(token?.word ?? '')) break;
   }
   return next;
 }
@@ -85,6 +88,23 @@ function readName(
   if (found.end === at + 1 && !isAbbreviation(quote(text, token.span), hasLevel)) return undefined;
   return { type: found.meaning, end: found.end };
 }
+
+// HR 1.9, 95% 1.2-3.1   RR 1.01, 95% 0.52, 1.97: the label itself was left out
+//         ^^^                    ^^^
+function unnamed(tokens: readonly Token[], at: number): Named | undefined {
+  const { printed } = tokens[at] as Token;
+  const [before, level, limit, joint, other] = tokens.slice(Math.max(0, at - 1), at + 4);
+  const isUsual = printed?.percent === true && USUAL.has(printed.value);
+  const follows = before?.kind === 'comma' || before?.kind === 'semicolon' || before?.kind === 'open';
+  const isJoint = joint?.kind === 'dash' || joint?.kind === 'comma' || joint?.word === 'to';
+  if (!isUsual || !follows || level !== tokens[at] || !isJoint) return undefined;
+  if (limit?.kind !== 'number' || other?.kind !== 'number' || (limit.printed?.decimals ?? 0) < 1) {
+    return undefined;
+  }
+  return { type: 'confidence', end: at + 1 };
+}
+
+const USUAL = new Set([90, 95, 99]);
 
 // C.I.
 function readDotted(tokens: readonly Token[], at: number): number | undefined {

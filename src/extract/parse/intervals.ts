@@ -112,7 +112,7 @@ function pairBehind(items: readonly Item[], at: number): Pair | undefined {
     return pair.joint === 'range' || closesAt(items, pair.end) ? pair : undefined;
   }
   if (next?.kind === 'comma' || next?.kind === 'semicolon' || next?.kind === 'colon') {
-    return pairAt(items, at + 2);
+    return pairAt(items, items[at + 2]?.kind === 'open' ? at + 3 : at + 2);
   }
   return undefined;
 }

@@ -24,7 +24,9 @@ export function readIntervalLabel(
   const named = readName(text, tokens, start, before !== undefined)
     ?? (before === undefined ? undefined : unnamed(tokens, at));
   if (named === undefined) return undefined;
-  const after = readTrailingLevel(tokens, named.end);
+  const trailing = readTrailingLevel(tokens, named.end);
+  // 95% CI 95% 0.76 to 1.66 repeats its level; 95% CI 55%, 65.5% does not.
+  const after = before === undefined || trailing?.level === before ? trailing : undefined;
   const end = skipRepetition(tokens, after?.end ?? named.end);
   const level = before ?? after?.level;
   return {

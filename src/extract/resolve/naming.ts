@@ -108,13 +108,38 @@ function measuredNaming(passage: Passage, draft: Draft): Naming | undefined {
   const { items } = passage;
   const { estimate, limits, anchor } = draft;
   const percent = estimate?.percent === true || limits?.upper.percent === true;
-  const isUnit = estimate !== undefined && isUnitWord(items[anchor + 1]);
+  const isUnit = estimate !== undefined && hasUnit(items, draft);
   const name = nearestName(passage, draft);
   const isNamedRatio = name?.naming.firm === true && name.naming.quantity.kind === 'ratio';
   const isBare = !isNamedRatio && (isWhole(draft) || isChange(items, anchor));
   if (!percent && !isUnit && !isBare && !isCount(items, draft)) return undefined;
   if (name !== undefined && name.naming.quantity.kind !== 'ratio') return name.naming;
   return percent ? PERCENTAGE : AMOUNT;
+}
+
+// 14.6 months (95% CI   33.2 [29.5-38.0] months   33.2 [95% CI 29.5-38.0] vs 29.5 [22.4-33.1] months
+//      ^^^^^^                            ^^^^^^                                               ^^^^^^
+function hasUnit(items: readonly Item[], { anchor, end, label }: Draft): boolean {
+  if (isUnitWord(items[anchor + 1]) || isUnitWord(afterBracket(items, end))) return true;
+  if (label !== undefined && isLoneWord(items, anchor + 1)) return true;
+  const versus = items[end]?.kind === 'close' ? items[end + 1] : undefined;
+  if (versus?.kind !== 'word' || (versus.word !== 'vs' && versus.word !== 'versus')) return false;
+  const next = items.slice(end + 2, end + 14);
+  return isUnitWord(next[next.findIndex(({ kind }) => kind === 'close') + 1]);
+}
+
+function afterBracket(items: readonly Item[], at: number): Item | undefined {
+  return items[at]?.kind === 'close' ? items[at + 1] : items[at];
+}
+
+const NOT_A_UNIT = new Set(['times', 'fold', 'and', 'with', 'respectively', 'overall', 'for', 'in', 'to']);
+
+// 1.19 tablets; 95% CI 1.06 to 1.32
+//      ^^^^^^^
+function isLoneWord(items: readonly Item[], at: number): boolean {
+  const [word, separator, label] = [items[at], items[at + 1], items[at + 2]];
+  const isSeparated = separator?.kind === 'semicolon' || separator?.kind === 'comma';
+  return word?.kind === 'word' && isSeparated && label?.kind === 'label' && !NOT_A_UNIT.has(word.word);
 }
 
 const COUNTING = new Set(['more', 'fewer', 'less', 'additional', 'extra']);

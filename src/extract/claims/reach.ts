@@ -42,17 +42,40 @@ function reachOf(
   result: Result,
   index: number,
 ): Reach {
+  const next = own[index + 1];
   const previous = own[index - 1];
-  const from = previous === undefined ? -1 : numbersOf(previous).end;
-  const isLast = index === own.length - 1;
   const { start, end } = numbersOf(result);
+  const leading = between(words, previous === undefined ? -1 : numbersOf(previous).end, start);
+  const trailing = between(words, end, next === undefined ? Infinity : numbersOf(next).start);
   return {
     result,
     sentence: sentenceSpans[sentence] ?? result.span,
-    follows: index > 0,
-    before: words.filter(({ span }) => span.start >= from && span.end <= start),
-    behind: isLast ? words.filter(({ span }) => span.start >= end) : [],
+    follows: previous !== undefined,
+    before: previous === undefined ? leading : leading.slice(afterthought(leading)),
+    behind: next === undefined ? trailing : trailing.slice(0, afterthought(trailing)),
   };
+}
+
+function between(words: readonly Token[], from: number, to: number): readonly Token[] {
+  return words.filter(({ span }) => span.start >= from && span.end <= to);
+}
+
+const JOINS = new Set(['and', 'while', 'whereas', 'but']);
+const VERBS = new Set(['was', 'were', 'is', 'are', 'had', 'did', 'has', 'have', 'showed']);
+
+/**
+ * How many of the words between two results still speak of the first: those up to
+ * a conjunction that begins a clause of its own.
+ *
+ * ```
+ * the HR was 1.34 (0.96–1.87), a significant increase, and for the others it was 1.22
+ *                              ^^^^^^^^^^^^^^^^^^^^^^
+ * ```
+ */
+function afterthought(words: readonly Token[]): number {
+  const join = words.findIndex(({ word }) => JOINS.has(word));
+  if (join < 0) return 0;
+  return words.slice(join).some(({ word }) => VERBS.has(word)) ? join : 0;
 }
 
 /** Where the estimate and interval stand; words may come between them and the p-value. */

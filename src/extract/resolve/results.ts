@@ -100,5 +100,16 @@ function spanOf(passage: Passage, draft: Draft, pAt: number | undefined): Span {
   if (draft.limits !== undefined) parts.push(draft.limits.span);
   const isClose = pAt !== undefined && Math.abs(pAt - draft.end) <= 8;
   if (isClose) parts.push((items[pAt] as Item).span);
-  return cover(parts[0] as Span, ...parts.slice(1));
+  const whole = cover(parts[0] as Span, ...parts.slice(1));
+  return { ...whole, end: endWithBrackets(passage, draft, isClose ? Math.max(pAt + 1, draft.end) : draft.end) ?? whole.end };
+}
+
+/** Where the brackets close that opened within a result: "1.59 (1.05–2.41)". */
+function endWithBrackets({ items, partners }: Passage, draft: Draft, end: number): number | undefined {
+  let last: number | undefined;
+  for (let at = end; items[at]?.kind === 'close'; at++) {
+    if ((partners[at] ?? -1) < draft.anchor) break;
+    last = (items[at] as Item).span.end;
+  }
+  return last;
 }

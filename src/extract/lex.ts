@@ -333,10 +333,23 @@ function restOfBrokenWord(text: string, at: number, limit: number): Span | undef
 
 const PLAIN = /^[a-z]+$/;
 
+/** Words already folded: prose repeats itself, and most words need no second look. */
+const FOLDED = new Map<string, string>();
+
+/** The cache is emptied when it holds so many words. */
+const MOST_FOLDED = 20_000;
+
 /** The word as it is looked up: ligatures undone, soft hyphens dropped, in lower case. */
 function fold(word: string): string {
+  const known = FOLDED.get(word);
+  if (known !== undefined) return known;
   const lower = word.toLowerCase();
-  return PLAIN.test(lower) ? lower : lower.normalize('NFKC').replaceAll('\u00ad', '').toLowerCase();
+  const folded = PLAIN.test(lower)
+    ? lower
+    : lower.normalize('NFKC').replaceAll('\u00ad', '').toLowerCase();
+  if (FOLDED.size >= MOST_FOLDED) FOLDED.clear();
+  if (word.length <= 40) FOLDED.set(word, folded);
+  return folded;
 }
 
 /** "37 per cent" says of the number what "37%" says. */

@@ -110,8 +110,9 @@ const USUAL = new Set([90, 95, 99]);
 
 // C.I.
 function readDotted(tokens: readonly Token[], at: number): number | undefined {
-  const [c, stop, i, end] = tokens.slice(at, at + 4);
-  if (c?.word !== 'c' || stop?.kind !== 'stop' || i?.word !== 'i' || i.spaced) return undefined;
+  if (tokens[at]?.word !== 'c') return undefined;
+  const [stop, i, end] = tokens.slice(at + 1, at + 4);
+  if ( stop?.kind !== 'stop' || i?.word !== 'i' || i.spaced) return undefined;
   return end?.kind === 'stop' && !end.spaced ? at + 4 : at + 3;
 }
 

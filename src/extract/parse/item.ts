@@ -1,5 +1,5 @@
-import type { Printed, PValue, Relation, Span } from '../../model/index.ts';
-import type { TokenKind } from '../token.ts';
+import type { Printed, PValue, Span } from '../../model/index.ts';
+import type { Token, TokenKind } from '../token.ts';
 import type { Naming } from '../vocabulary.ts';
 
 interface Standing {
@@ -37,12 +37,8 @@ export interface PValueItem extends Standing {
   readonly shared: boolean;
 }
 
-/** A word or a punctuation mark, as the lexer gave it. */
-export interface OtherItem extends Standing {
-  readonly kind: Exclude<TokenKind, 'number'>;
-  readonly word: string;
-  readonly relation?: Relation;
-}
+/** A word or a punctuation mark: the token itself. */
+export type OtherItem = Token & { readonly kind: Exclude<TokenKind, 'number'> };
 
 /** What a stretch of text is made of, once numbers have been told from what names them. */
 export type Item = NumberItem | NameItem | LabelItem | PValueItem | OtherItem;

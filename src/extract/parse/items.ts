@@ -34,16 +34,11 @@ function readItem(
   if (token.kind === 'number') {
     return readIntervalLabel(text, tokens, at) ?? { item: asNumber(tokens, at), end: at + 1 };
   }
-  if (token.kind !== 'word') return { item: asOther(token), end: at + 1 };
+  if (token.kind !== 'word') return { item: token as OtherItem, end: at + 1 };
   return readPValue(tokens, at)
     ?? readIntervalLabel(text, tokens, at)
     ?? readName(text, tokens, at, definitions)
-    ?? { item: asOther(token), end: at + 1 };
-}
-
-function asOther({ kind, span, spaced, word, relation }: Token): OtherItem {
-  const other = { kind: kind as OtherItem['kind'], span, spaced, word };
-  return relation === undefined ? other : { ...other, relation };
+    ?? { item: token as OtherItem, end: at + 1 };
 }
 
 function asNumber(tokens: readonly Token[], at: number): Item {

@@ -79,12 +79,22 @@ function readAbbreviation(
   definitions: Definitions,
 ): Abbreviation | undefined {
   const token = tokens[at] as Token;
+  if (!hasCapitals(text, token)) return lowerCase(tokens, at);
   const printed = quote(text, token.span);
   const short = abbreviated(definitions, printed) ?? withSubscript(definitions, printed);
   if (short === undefined) return lowerCase(tokens, at);
   if (isReceptor(tokens, at) || tokens[at - 1]?.kind === 'slash') return undefined;
   if (printed === 'OR' && standsAmongCapitals(text, tokens, at)) return undefined;
   return short;
+}
+
+/** Whether a capital stands behind the first letter, as in all abbreviations of measures. */
+function hasCapitals(text: string, { span }: Token): boolean {
+  for (let at = span.start + 1; at < span.end && at < span.start + 5; at++) {
+    const code = text.charCodeAt(at);
+    if (code >= 0x41 && code <= 0x5a) return true;
+  }
+  return false;
 }
 
 // HRTreatment   ORMH   HRadj
@@ -98,8 +108,9 @@ const LOWER_CASE: Readonly<Record<string, string>> = { or: 'OR', hr: 'HR', rr: '
 
 /** "or=2.3" in small letters, told by the sign that follows. */
 function lowerCase(tokens: readonly Token[], at: number): Abbreviation | undefined {
+  if (tokens[at + 1]?.relation !== '=') return undefined;
   const letters = LOWER_CASE[(tokens[at] as Token).word];
-  if (letters === undefined || tokens[at + 1]?.relation !== '=') return undefined;
+  if (letters === undefined) return undefined;
   if (tokens[at + 2]?.kind !== 'number') return undefined;
   return abbreviated(new Map(), letters);
 }

@@ -1,9 +1,13 @@
 import { cover, type Printed, quote } from '../../model/index.ts';
 import type { Item } from './item.ts';
 
-const UNITS = ('zero one two three four five six seven eight nine ten eleven twelve thirteen '
-  + 'fourteen fifteen sixteen seventeen eighteen nineteen').split(' ');
-const TENS = 'twenty thirty forty fifty sixty seventy eighty ninety'.split(' ');
+const UNITS = valuesOf('zero one two three four five six seven eight nine ten eleven twelve thirteen '
+  + 'fourteen fifteen sixteen seventeen eighteen nineteen', 0, 1);
+const TENS = valuesOf('twenty thirty forty fifty sixty seventy eighty ninety', 20, 10);
+
+function valuesOf(words: string, first: number, step: number): ReadonlyMap<string, number> {
+  return new Map(words.split(' ').map((word, index) => [word, first + index * step]));
+}
 
 /** A count in words or digits, and the index of the first item after it. */
 export interface CountNumber {
@@ -21,14 +25,15 @@ export function numberInWords(
 ): CountNumber | undefined {
   const first = items[at];
   if (first?.kind !== 'word') return undefined;
-  const unit = UNITS.indexOf(first.word);
-  if (unit >= 0) return spelled(text, items, at, at + 1, unit);
-  const ten = TENS.indexOf(first.word);
-  if (ten < 0) return undefined;
+  const unit = UNITS.get(first.word);
+  if (unit !== undefined) return spelled(text, items, at, at + 1, unit);
+  const ten = TENS.get(first.word);
+  if (ten === undefined) return undefined;
   const rest = items[at + 2];
-  const digit = items[at + 1]?.kind === 'dash' && rest?.kind === 'word' ? UNITS.indexOf(rest.word) : -1;
+  const isHyphenated = items[at + 1]?.kind === 'dash' && rest?.kind === 'word';
+  const digit = isHyphenated ? (UNITS.get(rest.word) ?? 0) : 0;
   const isCompound = digit > 0 && digit < 10;
-  return spelled(text, items, at, isCompound ? at + 3 : at + 1, 20 + ten * 10 + (isCompound ? digit : 0));
+  return spelled(text, items, at, isCompound ? at + 3 : at + 1, ten + (isCompound ? digit : 0));
 }
 
 function spelled(

@@ -100,6 +100,27 @@ describe('what is no ratio', () => {
   });
 });
 
+describe('test statistics and coefficients', () => {
+  it.each([
+    ['χ²(2) = 5.6, p = 0.06', 'chi-square 5.6 df 2 p=0.06'],
+    ['(χ2 = 5.6, df = 2, P=.06)', 'chi-square 5.6 df 2 p=.06'],
+    ['t(45) = −2.1, p = 0.04', 't -2.1 df 45 p=0.04'],
+    ['F(2, 57) = 3.2, p = 0.05', 'F 3.2 df 2,57 p=0.05'],
+    ['z = 2.17; p = 0.03', 'z 2.17 df  p=0.03'],
+    ['β = 0.46 (SE 0.21), p = 0.03', 'coefficient 0.46 ±0.21 p=0.03'],
+  ])('are read from "%s"', async (text, expected) => {
+    const [result] = (await findingsIn(text)).results;
+    const p = `p${result?.p?.relation}${result?.p?.printed.plain}`;
+    const shown = result?.kind === 'test'
+      ? `${result.statistic} ${result.estimate.plain} df ${
+        result.degreesOfFreedom.map(({ plain }) => plain).join()} ${p}`
+      : result?.kind === 'coefficient'
+        ? `coefficient ${result.estimate.plain} ±${result.standardError?.plain} ${p}`
+        : 'nothing';
+    expect(shown).toBe(expected);
+  });
+});
+
 describe('counts', () => {
   it.each([
     ['35 of 203 patients (17%)', '35/203 17'],

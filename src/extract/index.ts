@@ -9,10 +9,11 @@ import { findBareRatios } from './parse/bare-ratios.ts';
 import { findCounts } from './parse/counts.ts';
 import { findIntervals } from './parse/intervals.ts';
 import { readItems } from './parse/items.ts';
+import { findStatistics } from './parse/statistics.ts';
 import { type Passage, passageOf } from './parse/passage.ts';
 import { customsOf } from './resolve/customs.ts';
 import { prevalencesIn } from './prevalences.ts';
-import { type Customs, resolveResults } from './resolve/results.ts';
+import { type Customs, resolveResults, resolveStatistics } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
 import type { Token } from './token.ts';
 
@@ -53,7 +54,12 @@ function findingsOf(
   const intervals = findIntervals(passage);
   const bare = findBareRatios(passage, intervals);
   const drafts = [...intervals, ...bare].sort((a, b) => a.anchor - b.anchor);
-  const resolved = resolveResults(passage, drafts, customs);
+  const statistics = findStatistics(passage.items).filter(({ start, end }) =>
+    !drafts.some((draft) => draft.anchor >= start && draft.anchor < end));
+  const resolved = [
+    ...resolveResults(passage, drafts, customs),
+    ...resolveStatistics(statistics),
+  ].sort((a, b) => a.span.start - b.span.start);
   const reaches = reachesOf(passage, tokens, resolved);
   const results = reaches.map(({ result, before }) => withAbout(text, result, before));
   return {

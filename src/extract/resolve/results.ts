@@ -2,6 +2,7 @@ import { cover, type Inheritable, type Interval, type Result, type Span } from '
 import type { Draft } from '../parse/draft.ts';
 import type { Item, PValueItem } from '../parse/item.ts';
 import type { Passage } from '../parse/passage.ts';
+import type { StatisticDraft } from '../parse/statistics.ts';
 import type { Naming } from '../vocabulary.ts';
 import { adjustmentOf } from './adjustment.ts';
 import { type Before, type Resolved, resolveNaming } from './naming.ts';
@@ -80,6 +81,27 @@ function makeResult(
     default:
       return quantity satisfies never;
   }
+}
+
+/** Turns the test statistics and coefficients of a passage into results. */
+export function resolveStatistics(drafts: readonly StatisticDraft[]): readonly Result[] {
+  return drafts.map((draft): Result => {
+    const common = {
+      span: draft.span,
+      about: {},
+      inferred: [],
+      counts: [],
+      cited: false,
+      estimate: draft.estimate,
+      ...(draft.p === undefined ? {} : { p: draft.p.value }),
+    };
+    if (draft.statistic === undefined) {
+      const { standardError } = draft;
+      return { ...common, kind: 'coefficient', ...(standardError === undefined ? {} : { standardError }) };
+    }
+    const { statistic, degreesOfFreedom } = draft;
+    return { ...common, kind: 'test', statistic, relation: '=', degreesOfFreedom };
+  });
 }
 
 function intervalOf({ limits, label }: Draft, level: number | undefined): Interval | undefined {

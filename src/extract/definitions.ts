@@ -64,13 +64,17 @@ function nameBefore(tokens: readonly Token[], end: number): Naming | undefined {
   return undefined;
 }
 
+/** Words of a measure's name: a name with one of them is a measure, even if misspelt. */
+const OF_RATIOS = new Set(['odds', 'hazard', 'hazards', 'ratio', 'ratios', 'ration', 'relative']);
+
 /** Whether the words before spell the letters out: "partial response (PR)". */
 function spellsOut(tokens: readonly Token[], end: number, printed: string): boolean {
   const letters = printed.replace(/s$/, '').toLowerCase();
   let at = end - 1;
   for (let index = letters.length - 1; index >= 0; index--) {
     while (tokens[at]?.kind === 'dash') at--;
-    if (tokens[at]?.kind !== 'word' || tokens[at]?.word[0] !== letters[index]) return false;
+    const { kind, word } = tokens[at] ?? { kind: 'other', word: '' };
+    if (kind !== 'word' || word[0] !== letters[index] || OF_RATIOS.has(word)) return false;
     at--;
   }
   return true;

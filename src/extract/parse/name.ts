@@ -19,6 +19,7 @@ export function readName(
   definitions: Definitions,
 ): Recognised<NameItem> | undefined {
   const token = tokens[at] as Token;
+  if (isGreekLetter(token.word) && !isCoefficient(tokens, at)) return undefined;
   const phrase = findPhrase(NAMES, tokens, at);
   if (phrase !== undefined && isRatioWord(tokens[phrase.end])) return namedRatio(tokens, at, phrase.end);
   if (phrase !== undefined && (phrase.end > at + 1 || phrase.meaning.quantity.kind !== 'ratio')) {
@@ -29,6 +30,17 @@ export function readName(
   if (short !== undefined) return named(short, tokens, at, at + 1);
   if (phrase === undefined || token.word.length < 3) return undefined;
   return named({ naming: phrase.meaning }, tokens, at, phrase.end);
+}
+
+function isGreekLetter(word: string): boolean {
+  return word === 'beta' || word === 'β';
+}
+
+// β = 0.46   beta coefficient   but not: beta-blockers   TGF-beta   beta (1) receptor
+function isCoefficient(tokens: readonly Token[], at: number): boolean {
+  const [before, next] = [tokens[at - 1], tokens[at + 1]];
+  if (before?.kind === 'dash' && !before.spaced) return false;
+  return next?.kind === 'relation' || next?.word === 'coefficient' || next?.word === 'coefficients';
 }
 
 function isRatioWord(token: Token | undefined): boolean {

@@ -39,7 +39,9 @@ export function resolveNaming(
   if (measured !== undefined) return { naming: measured, inherited: false };
   const near = nearestName(passage, draft);
   if (near?.naming.firm && fits(near.naming, draft)) return own(near);
-  if (near !== undefined && isLinked(passage, draft)) return own(near, before, common);
+  if (near !== undefined && isLinked(passage, draft) && fits(near.naming, draft)) {
+    return own(near, before, common);
+  }
   if (before !== undefined && continues(passage, before, draft)) {
     return { ...before.resolved, inherited: true };
   }
@@ -66,8 +68,11 @@ const A_RATIO: Resolved = {
   inherited: true,
 };
 
-/** Whether the numbers can be values of it: a ratio is never negative. */
-function fits({ quantity }: Naming, { estimate, limits }: Draft): boolean {
+/** Whether the numbers can be values of it: no ratio is negative, no share is above 1. */
+function fits({ quantity, firm }: Naming, { estimate, limits }: Draft): boolean {
+  if (quantity.kind === 'proportion' && !firm) {
+    return estimate?.percent === true || (limits?.upper.value ?? Infinity) <= 1;
+  }
   if (quantity.kind !== 'ratio') return true;
   return !((estimate?.value ?? 0) < 0 || (limits?.lower.value ?? 0) < 0);
 }
@@ -113,7 +118,8 @@ function measuredNaming(passage: Passage, draft: Draft): Naming | undefined {
   const isNamedRatio = name?.naming.firm === true && name.naming.quantity.kind === 'ratio';
   const isBare = !isNamedRatio && (isWhole(draft) || isChange(items, anchor));
   if (!percent && !isUnit && !isBare && !isCount(items, draft)) return undefined;
-  if (name !== undefined && name.naming.quantity.kind !== 'ratio') return name.naming;
+  const isOther = name !== undefined && name.naming.quantity.kind !== 'ratio';
+  if (isOther && fits(name.naming, draft)) return name.naming;
   return percent ? PERCENTAGE : AMOUNT;
 }
 

@@ -15,6 +15,7 @@ import { customsOf } from './resolve/customs.ts';
 import { prevalencesIn } from './prevalences.ts';
 import { type Customs, resolveResults, resolveStatistics } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
+import { resultsInTable } from './tables/table-results.ts';
 import type { Token } from './token.ts';
 
 /**
@@ -37,12 +38,18 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
   const found = passages.map((passage, index) =>
     findingsOf(text, passage, tokens[index] ?? [], customs),
   );
+  const context = { text, style, marks, definitions, customs };
+  const tabled = manuscript.tables.flatMap((table) => resultsInTable(table, context));
   return {
-    results: found.flatMap(({ results }) => results),
+    results: inOrder([...found.flatMap(({ results }) => results), ...tabled]),
     claims: found.flatMap(({ claims }) => claims),
     counts: found.flatMap(({ counts }) => counts),
     prevalences: found.flatMap(({ prevalences }) => prevalences),
   };
+}
+
+function inOrder(results: readonly Result[]): readonly Result[] {
+  return results.toSorted((a, b) => a.span.start - b.span.start);
 }
 
 function findingsOf(

@@ -38,19 +38,19 @@ export function resolveNaming(
   const measured = measuredNaming(passage, draft);
   if (measured !== undefined) return { naming: measured, inherited: false };
   const near = nearestName(passage, draft);
-  if (near?.naming.firm && fits(near.naming, draft)) return own(near);
-  if (near !== undefined && isLinked(passage, draft) && fits(near.naming, draft)) {
+  if (near?.naming.firm && fitsNumbers(near.naming, draft)) return own(near);
+  if (near !== undefined && isLinked(passage, draft) && fitsNumbers(near.naming, draft)) {
     return own(near, before, common);
   }
   if (before !== undefined && continues(passage, before, draft)) {
     return { ...before.resolved, inherited: true };
   }
   const named = nameInBrackets(passage, draft);
-  if (named !== undefined && fits(named.naming, draft)) return own(named);
-  const inherited = common === undefined || !fits(common, draft)
+  if (named !== undefined && fitsNumbers(named.naming, draft)) return own(named);
+  const inherited = common === undefined || !fitsNumbers(common, draft)
     ? undefined
     : { naming: common, inherited: true };
-  return isRatioLike(passage, draft) ? (inherited ?? A_RATIO) : near === undefined ? inherited : own(near);
+  return isRatioLike(passage, draft) ? (inherited ?? SOME_RATIO) : near === undefined ? inherited : own(near);
 }
 
 /** A name of its own; a bare "ratio" means the ratio that was spoken of before. */
@@ -63,13 +63,16 @@ function own(name: NameItem, before?: Before, common?: Naming): Resolved {
   return { naming: earlier ?? name.naming, name, inherited: earlier !== undefined };
 }
 
-const A_RATIO: Resolved = {
-  naming: { quantity: { kind: 'ratio', measure: 'ratio' }, firm: true },
-  inherited: true,
-};
+/** A ratio of which the text does not say which it is. */
+export const A_RATIO: Naming = { quantity: { kind: 'ratio', measure: 'ratio' }, firm: true };
+
+const SOME_RATIO: Resolved = { naming: A_RATIO, inherited: true };
 
 /** Whether the numbers can be values of it: no ratio is negative, no share is above 1. */
-function fits({ quantity, firm }: Naming, { estimate, limits }: Draft): boolean {
+export function fitsNumbers(
+  { quantity, firm }: Naming,
+  { estimate, limits }: Pick<Draft, 'estimate' | 'limits'>,
+): boolean {
   if (quantity.kind === 'proportion' && !firm) {
     return estimate?.percent === true || (limits?.upper.value ?? Infinity) <= 1;
   }
@@ -88,7 +91,7 @@ const LINKING = new Set(['was', 'were', 'is', 'are', 'of', 'by']);
 
 /** No estimate at all, or one followed by "times" or "fold". */
 function isRatioLike({ items }: Passage, draft: Draft): boolean {
-  if (draft.estimate === undefined) return fits(A_RATIO.naming, draft);
+  if (draft.estimate === undefined) return fitsNumbers(A_RATIO, draft);
   return [1, 2].flatMap((step) => [draft.anchor + step, draft.end + step - 1]).some((at) => {
     const item = items[at];
     return item?.kind === 'word' && (item.word === 'times' || item.word === 'fold');
@@ -106,7 +109,8 @@ function attachedName({ items }: Passage, { anchor, end }: Draft): NameItem | un
 }
 
 const PERCENTAGE: Naming = { quantity: { kind: 'proportion' }, firm: true };
-const AMOUNT: Naming = { quantity: { kind: 'other', measure: 'other' }, firm: true };
+/** An estimate with an interval of which no more is known than that it is no ratio. */
+export const AN_AMOUNT: Naming = { quantity: { kind: 'other', measure: 'other' }, firm: true };
 
 /** What a percent sign or a unit right behind the estimate tells. */
 function measuredNaming(passage: Passage, draft: Draft): Naming | undefined {
@@ -119,8 +123,8 @@ function measuredNaming(passage: Passage, draft: Draft): Naming | undefined {
   const isBare = !isNamedRatio && (isWhole(draft) || isChange(items, anchor));
   if (!percent && !isUnit && !isBare && !isCount(items, draft)) return undefined;
   const isOther = name !== undefined && name.naming.quantity.kind !== 'ratio';
-  if (isOther && fits(name.naming, draft)) return name.naming;
-  return percent ? PERCENTAGE : AMOUNT;
+  if (isOther && fitsNumbers(name.naming, draft)) return name.naming;
+  return percent ? PERCENTAGE : AN_AMOUNT;
 }
 
 // 14.6 months (95% CI   33.2 [29.5-38.0] months   33.2 [95% CI 29.5-38.0] vs 29.5 [22.4-33.1] months
@@ -207,5 +211,5 @@ function nameInBrackets(passage: Passage, { anchor }: Draft): NameItem | undefin
 function continues({ sentences }: Passage, { draft, resolved }: Before, next: Draft): boolean {
   const gap = (sentences[next.anchor] ?? 0) - (sentences[draft.anchor] ?? 0);
   const alike = draft.estimate?.percent === next.estimate?.percent;
-  return alike && gap <= 2 && fits(resolved.naming, next);
+  return alike && gap <= 2 && fitsNumbers(resolved.naming, next);
 }

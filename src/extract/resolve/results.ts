@@ -1,11 +1,14 @@
-import { cover, type Inheritable, type Interval, type Result, type Span } from '../../model/index.ts';
+import {
+  type About, type CellPlace, cover, type Inheritable, type Interval, type Printed, type PValue, type Result,
+  type Span,
+} from '../../model/index.ts';
 import type { Draft } from '../parse/draft.ts';
 import type { Item, PValueItem } from '../parse/item.ts';
 import type { Passage } from '../parse/passage.ts';
 import type { StatisticDraft } from '../parse/statistics.ts';
 import type { Naming } from '../vocabulary.ts';
 import { adjustmentOf } from './adjustment.ts';
-import { type Before, type Resolved, resolveNaming } from './naming.ts';
+import { AN_AMOUNT, type Before, type Resolved, resolveNaming } from './naming.ts';
 import { assignPValues } from './p-values.ts';
 
 /** What a result may inherit from outside its own block. */
@@ -32,8 +35,7 @@ export function resolveResults(
     const resolved = resolveNaming(passage, draft, before, common);
     if (resolved !== undefined) before = { draft, resolved };
     const p = pValues.get(draft);
-    const result = makeResult(passage, draft, resolved, p, level ?? customs.level);
-    if (result !== undefined) results.push(result);
+    results.push(makeResult(passage, draft, resolved, p, level ?? customs.level));
   }
   return results;
 }
@@ -44,43 +46,87 @@ function makeResult(
   resolved: Resolved | undefined,
   pAt: number | undefined,
   level: number | undefined,
-): Result | undefined {
+): Result {
   const p = pAt === undefined ? undefined : (passage.items[pAt] as PValueItem);
-  const interval = intervalOf(draft, level);
   const adjusted = adjustmentOf(passage, draft, resolved?.name);
   const inferred: Inheritable[] = [];
   if (resolved?.inherited) inferred.push('measure');
-  if (interval?.level !== undefined && draft.label?.level === undefined) inferred.push('level');
-  const common = {
-    span: spanOf(passage, draft, pAt),
-    about: {},
+  if (draft.limits !== undefined && level !== undefined && draft.label?.level === undefined) {
+    inferred.push('level');
+  }
+  return resultOf(resolved?.naming ?? AN_AMOUNT, {
+    ...(draft.estimate === undefined ? {} : { estimate: draft.estimate }),
+    ...(draft.limits === undefined ? {} : { limits: draft.limits }),
+    ...(level === undefined ? {} : { level }),
+    ...(p === undefined ? {} : { p: p.value }),
     ...(adjusted === undefined ? {} : { adjusted }),
+    type: draft.label?.type ?? 'confidence',
+    span: spanOf(passage, draft, pAt),
+    intervalSpan: draft.label === undefined ? draft.limits?.span : cover(draft.label.span, draft.limits?.span ?? draft.label.span),
+    inferred,
+    about: {},
+  });
+}
+
+/** All that is known of a result beside what it is a value of. */
+export interface Known {
+  readonly estimate?: Printed;
+  readonly limits?: { readonly lower: Printed; readonly upper: Printed; readonly span: Span };
+  /** Where the interval stands with its label; its limits alone where there is none. */
+  readonly intervalSpan?: Span | undefined;
+  readonly level?: number;
+  readonly type: Interval['type'];
+  readonly p?: PValue;
+  readonly adjusted?: boolean;
+  readonly inferred: readonly Inheritable[];
+  readonly about: About;
+  readonly cell?: CellPlace;
+  readonly span: Span;
+}
+
+/** A result, as the kind that its quantity asks for. */
+export function resultOf({ quantity }: Naming, known: Known): Result {
+  const { span, about, inferred, estimate } = known;
+  const interval = intervalOf(known);
+  const common = {
+    span,
+    about,
     inferred,
     counts: [],
-    ...(interval === undefined ? {} : { interval }),
-    ...(p === undefined ? {} : { p: p.value }),
     cited: false,
+    ...(known.adjusted === undefined ? {} : { adjusted: known.adjusted }),
+    ...(interval === undefined ? {} : { interval }),
+    ...(known.p === undefined ? {} : { p: known.p }),
+    ...(known.cell === undefined ? {} : { cell: known.cell }),
   };
-  const estimate = draft.estimate === undefined ? {} : { estimate: draft.estimate };
-  const quantity = resolved?.naming.quantity ?? { kind: 'other', measure: 'other' };
+  const printed = estimate === undefined ? {} : { estimate };
   switch (quantity.kind) {
     case 'ratio':
+      return { ...common, ...printed, kind: 'ratio', measure: quantity.measure };
     case 'difference':
+      return { ...common, ...printed, kind: 'difference', measure: quantity.measure };
     case 'other':
-      return { ...common, ...estimate, ...quantity } as Result;
+      return { ...common, ...printed, kind: 'other', measure: quantity.measure };
     case 'proportion':
-      return { ...common, ...estimate, kind: 'proportion' };
+      return { ...common, ...printed, kind: 'proportion' };
     case 'coefficient':
-      return draft.estimate === undefined
-        ? undefined
-        : { ...common, kind: 'coefficient', estimate: draft.estimate };
     case 'discrimination':
-      return draft.estimate === undefined
-        ? undefined
-        : { ...common, ...quantity, estimate: draft.estimate };
+      if (estimate === undefined) return { ...common, kind: 'other', measure: 'other' };
+      return { ...common, ...quantity, estimate };
     default:
       return quantity satisfies never;
   }
+}
+
+function intervalOf({ limits, level, type, intervalSpan }: Known): Interval | undefined {
+  if (limits === undefined) return undefined;
+  return {
+    lower: limits.lower,
+    upper: limits.upper,
+    ...(level === undefined ? {} : { level }),
+    type,
+    span: intervalSpan ?? limits.span,
+  };
 }
 
 /** Turns the test statistics and coefficients of a passage into results. */
@@ -102,17 +148,6 @@ export function resolveStatistics(drafts: readonly StatisticDraft[]): readonly R
     const { statistic, degreesOfFreedom } = draft;
     return { ...common, kind: 'test', statistic, relation: '=', degreesOfFreedom };
   });
-}
-
-function intervalOf({ limits, label }: Draft, level: number | undefined): Interval | undefined {
-  if (limits === undefined) return undefined;
-  return {
-    lower: limits.lower,
-    upper: limits.upper,
-    ...(level === undefined ? {} : { level }),
-    type: label?.type ?? 'confidence',
-    span: label === undefined ? limits.span : cover(label.span, limits.span),
-  };
 }
 
 /** From the first to the last printed number of the result; a p-value further off stays out. */

@@ -1,0 +1,87 @@
+import type { PValue } from '../../model/index.ts';
+import type { Item, LabelItem, NameItem } from '../parse/item.ts';
+import { findPhrase, type Worded } from '../phrases.ts';
+import { ADJUSTMENT, type Naming } from '../vocabulary.ts';
+
+/** What a heading, a row's label, a caption or a note says of the numbers it is over. */
+export interface Heading {
+  readonly names: readonly Naming[];
+  readonly label?: LabelItem;
+  readonly adjusted?: boolean;
+  /** Set where the column holds p-values, with what they test. */
+  readonly p?: PValue['tests'];
+  /** Which limit a column of single limits holds. */
+  readonly limit?: 'lower' | 'upper';
+  /** Whether it speaks of counts, shares, means, medians or spreads: of no ratio. */
+  readonly plain: boolean;
+  /** Whether it speaks of means, medians or spreads, whose brackets hold no interval of a ratio. */
+  readonly spread: boolean;
+}
+
+const PLAIN = new Set(['n', 'no', 'number', 'mean', 'median', 'iqr', 'sd', 'range', 'gmt', 'score', 'percent',
+  'years', 'months', 'days', 'frequency', 'events', 'cases', 'total', 'deaths', 'person', 'persons', 'se',
+  'interquartile', 'percentage', 'prevalence', 'rate', 'incidence', 'coefficient', 'difference', 'beta', 'b',
+  'β', 'r', 'nnt', 'weight', 'correlation', 'sensitivity', 'specificity', 'proportion', 'size', 'count']);
+
+const P_HEADINGS = new Set(['p', 'ptrend', 'pvalue', 'pinteraction', 'sig', 'pint', 'phet']);
+
+/** Reads what the items of a heading say. */
+export function headingOf(items: readonly Item[]): Heading {
+  const names = items.flatMap((item) => (item.kind === 'name' ? [item] : []));
+  const label = items.find((item) => item.kind === 'label');
+  const adjusted = adjustmentIn(items, names);
+  const p = pHeading(items);
+  const limit = limitIn(items);
+  const firm = names.map(({ naming }) => naming);
+  return {
+    names: firm,
+    ...(label === undefined ? {} : { label }),
+    ...(adjusted === undefined ? {} : { adjusted }),
+    ...(p === undefined ? {} : { p }),
+    ...(limit === undefined ? {} : { limit }),
+    plain: isPlain(items, firm),
+    spread: items.some((item) => item.kind === 'plus-minus' || isNamedSpread(item)),
+  };
+}
+
+function adjustmentIn(items: readonly Item[], names: readonly NameItem[]): boolean | undefined {
+  const own = names.find((name) => name.adjusted !== undefined)?.adjusted;
+  if (own !== undefined) return own;
+  for (let at = 0; at < items.length; at++) {
+    if (items[at]?.kind !== 'word') continue;
+    const said = findPhrase(ADJUSTMENT, items as readonly Worded[], at)?.meaning;
+    if (said !== undefined) return said;
+  }
+  return undefined;
+}
+
+// P   P-value   p for trend   Ptrend   Sig.
+function pHeading(items: readonly Item[]): PValue['tests'] | undefined {
+  const [first] = items.filter(({ kind }) => kind !== 'other' && kind !== 'open' && kind !== 'star');
+  if (first?.kind !== 'word' || !P_HEADINGS.has(first.word)) return undefined;
+  const words = items.flatMap((item) => (item.kind === 'word' ? [item.word] : [])).join(' ');
+  if (/trend/.test(words)) return 'trend';
+  if (/inter|pint/.test(words)) return 'interaction';
+  return /het/.test(words) ? 'heterogeneity' : 'result';
+}
+
+function limitIn(items: readonly Item[]): Heading['limit'] {
+  const words = new Set(items.flatMap((item) => (item.kind === 'word' ? [item.word] : [])));
+  if (words.has('lower') || words.has('lcl') || words.has('ll')) return 'lower';
+  return words.has('upper') || words.has('ucl') || words.has('ul') ? 'upper' : undefined;
+}
+
+const SPREADS = new Set(['iqr', 'sd', 'gmt', 'interquartile', 'range', 'quartiles']);
+
+function isNamedSpread(item: Item): boolean {
+  if (item.kind === 'word') return SPREADS.has(item.word);
+  const { quantity } = item.kind === 'name' ? item.naming : {};
+  return quantity?.kind === 'other' && (quantity.measure === 'mean' || quantity.measure === 'median');
+}
+
+function isPlain(items: readonly Item[], names: readonly Naming[]): boolean {
+  if (names.some(({ quantity, firm }) => firm && quantity.kind === 'ratio')) return false;
+  if (names.some(({ quantity }) => quantity.kind !== 'ratio')) return true;
+  return items.some((item) => item.kind === 'percent' || item.kind === 'plus-minus'
+    || (item.kind === 'word' && PLAIN.has(item.word)));
+}

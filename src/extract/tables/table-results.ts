@@ -1,0 +1,345 @@
+import {
+  type Cell, cover, type Inheritable, type Mark, type PValue, type Result, type Table,
+} from '../../model/index.ts';
+import type { Definitions } from '../definitions.ts';
+import { lex } from '../lex.ts';
+import type { NumberStyle } from '../number.ts';
+import type { Item } from '../parse/item.ts';
+import { readItems } from '../parse/items.ts';
+import { A_RATIO, AN_AMOUNT, fitsNumbers } from '../resolve/naming.ts';
+import { type Customs, resultOf } from '../resolve/results.ts';
+import type { Naming } from '../vocabulary.ts';
+import { type CellValue, valuesIn } from './cell-values.ts';
+import { type Grid, gridOf } from './grid.ts';
+import { type Heading, headingOf } from './heading.ts';
+import { type Labels, labelsOf } from './labels.ts';
+
+/** What a manuscript tells of how its cells are to be read. */
+export interface TableContext {
+  readonly text: string;
+  readonly style: NumberStyle;
+  readonly marks: readonly Mark[];
+  readonly definitions: Definitions;
+  readonly customs: Customs;
+}
+
+/** A table made ready for reading: its grid, its margins, and every cell's items. */
+interface Sheet {
+  readonly grid: Grid;
+  readonly labels: Labels;
+  readonly itemsOf: (cell: Cell) => readonly Item[];
+  readonly caption: Heading;
+  readonly notes: Heading;
+  readonly context: TableContext;
+}
+
+/**
+ * The results of a table. What a cell's numbers are values of is told by the cell
+ * itself, the heading over its column, the label before its row, the group it
+ * stands in, the caption, and the notes, in this order.
+ */
+export function resultsInTable(table: Table, context: TableContext): readonly Result[] {
+  const sheet = sheetOf(table, context);
+  const inForce = columnHeadings(sheet);
+  const results: Result[] = [];
+  for (let row = sheet.labels.headingRows; row < table.rowCount; row++) {
+    if (replaceHeadings(sheet, row, inForce)) continue;
+    results.push(...resultsInRow(sheet, row, inForce));
+  }
+  return results;
+}
+
+function sheetOf(table: Table, context: TableContext): Sheet {
+  const { text, definitions, style, marks } = context;
+  const grid = gridOf(text, table);
+  const read = (span: { start: number; end: number }): readonly Item[] =>
+    readItems(text, lex(text, span, style, marks), definitions);
+  const cache = new Map<Cell, readonly Item[]>();
+  const itemsOf = (cell: Cell): readonly Item[] => {
+    const known = cache.get(cell) ?? read(cell.span);
+    cache.set(cell, known);
+    return known;
+  };
+  const isEmptyRow = (row: number): boolean => {
+    for (let column = 1; column < table.columnCount; column++) {
+      const words = grid.words(row, column);
+      if (words !== '' && grid.at(row, column) !== grid.at(row, 0)) return false;
+    }
+    return true;
+  };
+  return {
+    grid,
+    labels: labelsOf(grid, isEmptyRow),
+    itemsOf,
+    caption: headingOf(table.caption === undefined ? [] : read(table.caption)),
+    notes: headingOf(table.notes.flatMap(read)),
+    context,
+  };
+}
+
+/** The headings over the columns, joined over their levels. */
+function columnHeadings({ grid, labels, itemsOf }: Sheet): Heading[] {
+  return Array.from({ length: grid.table.columnCount }, (_, column) => {
+    const cells: Cell[] = [];
+    for (let row = 0; row < labels.headingRows; row++) {
+      const cell = grid.at(row, column);
+      if (cell !== undefined && cells.at(-1) !== cell) cells.push(cell);
+    }
+    return headingOf(cells.flatMap(itemsOf));
+  });
+}
+
+/**
+ * A row in the body that names quantities and holds no numbers heads what is below
+ * it, as in a second panel. Says whether the row is one.
+ */
+function replaceHeadings({ grid, itemsOf }: Sheet, row: number, inForce: Heading[]): boolean {
+  if (grid.isHeaderRow(row)) return true;
+  const replaced = new Map<number, Heading>();
+  for (let column = 1; column < grid.table.columnCount; column++) {
+    const cell = grid.at(row, column);
+    if (cell === undefined || cell.row !== row || cell === grid.at(row, 0)) continue;
+    const items = itemsOf(cell);
+    if (items.some(({ kind }) => kind === 'number' || kind === 'p')) return false;
+    const heading = headingOf(items);
+    if (heading.names.some(({ firm }) => firm) || heading.label !== undefined || heading.p !== undefined) {
+      replaced.set(column, heading);
+    }
+  }
+  for (const [column, heading] of replaced) inForce[column] = heading;
+  return replaced.size > 0;
+}
+
+/** A value with the cell and the column it stands in. */
+interface Placed {
+  readonly value: CellValue;
+  readonly cell: Cell;
+  readonly column: number;
+  /** Its place among the values of its cell, and how many there are. */
+  readonly index: number;
+  readonly count: number;
+}
+
+function resultsInRow(
+  sheet: Sheet,
+  row: number,
+  inForce: readonly Heading[],
+): readonly Result[] {
+  const placed = joinedIntervals(placedInRow(sheet, row), inForce);
+  const margin = headingOf(labelItems(sheet, row));
+  return placed.flatMap((entry) => {
+    const naming = namingOf(sheet, entry, margin, inForce);
+    if (naming === undefined) return [];
+    return [makeResult(sheet, row, entry, naming, inForce, placed)];
+  });
+}
+
+function placedInRow({ grid, itemsOf }: Sheet, row: number): readonly Placed[] {
+  const placed: Placed[] = [];
+  for (let column = 0; column < grid.table.columnCount; column++) {
+    const cell = grid.at(row, column);
+    if (cell === undefined || cell.row !== row || cell.column !== column) continue;
+    const values = valuesIn(itemsOf(cell));
+    if (column === 0 && !values.some(({ limits, estimate }) => limits && estimate)) continue;
+    values.forEach((value, index) => placed.push({ value, cell, column, index, count: values.length }));
+  }
+  return placed;
+}
+
+/**
+ * Joins an estimate with the interval in the next cell, or with the two limits in
+ * the next two.
+ *
+ * ```
+ * 1.87 | (1.56, 2.25)        1.87 | 1.56 | 2.25
+ * ```
+ */
+function joinedIntervals(
+  placed: readonly Placed[],
+  inForce: readonly Heading[],
+): readonly Placed[] {
+  const joined: Placed[] = [];
+  for (let at = 0; at < placed.length; at++) {
+    const entry = placed[at] as Placed;
+    const [next, afterNext] = [placed[at + 1], placed[at + 2]];
+    if (isInterval(next) && isLoneEstimate(entry) && next.column === endOf(entry)) {
+      joined.push(withLimits(entry, next.value.limits, next));
+      at++;
+      continue;
+    }
+    const limits = splitLimits(entry, next, afterNext, inForce);
+    if (limits !== undefined && afterNext !== undefined) {
+      joined.push(withLimits(entry, limits, afterNext));
+      at += 2;
+    } else joined.push(entry);
+  }
+  return joined;
+}
+
+type WithLimits = Placed & { readonly value: { readonly limits: NonNullable<CellValue['limits']> } };
+type WithEstimate = Placed & { readonly value: { readonly estimate: NonNullable<CellValue['estimate']> } };
+
+function isInterval(entry: Placed | undefined): entry is WithLimits {
+  return entry?.value.limits !== undefined && entry.value.estimate === undefined;
+}
+
+function isLoneEstimate(entry: Placed | undefined): entry is WithEstimate {
+  return entry?.value.estimate !== undefined && entry.value.limits === undefined
+    && entry.index === entry.count - 1;
+}
+
+/** The limits that stand in the two cells behind an estimate, as their headings say. */
+function splitLimits(
+  entry: Placed,
+  next: Placed | undefined,
+  afterNext: Placed | undefined,
+  inForce: readonly Heading[],
+): CellValue['limits'] | undefined {
+  if (!isLoneEstimate(entry) || !isLoneEstimate(next) || !isLoneEstimate(afterNext)) return undefined;
+  const isSplit = inForce[next.column]?.limit === 'lower' && inForce[afterNext.column]?.limit === 'upper';
+  const [lower, upper] = [next.value.estimate, afterNext.value.estimate];
+  return isSplit ? { lower, upper, span: cover(lower.span, upper.span) } : undefined;
+}
+
+function endOf({ cell }: Placed): number {
+  return cell.column + cell.columnSpan;
+}
+
+function withLimits(
+  entry: Placed,
+  limits: NonNullable<CellValue['limits']>,
+  { value, cell }: Placed,
+): Placed {
+  const { estimate } = entry.value;
+  const p = value.p ?? entry.value.p;
+  const span = estimate === undefined ? limits.span : cover(estimate.span, limits.span);
+  return {
+    ...entry,
+    cell: { ...entry.cell, columnSpan: cell.column + cell.columnSpan - entry.cell.column },
+    value: { ...(estimate === undefined ? {} : { estimate }), limits, span, ...(p === undefined ? {} : { p }) },
+  };
+}
+
+function labelItems({ grid, itemsOf }: Sheet, row: number): readonly Item[] {
+  const cell = grid.at(row, 0);
+  return cell === undefined ? [] : itemsOf(cell);
+}
+
+/** What a value is a value of, or undefined where it is no result. */
+function namingOf(
+  sheet: Sheet,
+  entry: Placed,
+  margin: Heading,
+  inForce: readonly Heading[],
+): Naming | undefined {
+  const { value, column } = entry;
+  const heading = inForce[column];
+  if (heading?.p !== undefined && value.limits === undefined) return undefined;
+  const over = nameFor(heading, entry);
+  if (value.limits === undefined) return isBareRatio(sheet, entry, over) ? over : undefined;
+  if (value.estimate === undefined) return undefined;
+  if (over !== undefined) return over;
+  if (heading?.plain) return AN_AMOUNT;
+  const beside = nameFor(margin, entry);
+  if (beside !== undefined) return beside;
+  if (margin.spread) return AN_AMOUNT;
+  const { caption, notes, context } = sheet;
+  const inherited = nameFor(caption, entry) ?? (caption.spread ? AN_AMOUNT : nameFor(notes, entry));
+  if (inherited !== undefined) return inherited;
+  if (!fitsNumbers(A_RATIO, value)) return AN_AMOUNT;
+  const announced = heading?.label ?? caption.label ?? notes.label;
+  return announced === undefined ? undefined : (context.customs.naming ?? AN_AMOUNT);
+}
+
+/**
+ * The name in a heading for a value: the one in the value's place where a cell holds
+ * as many values as the heading has names, else the first that can have such numbers.
+ */
+function nameFor(heading: Heading | undefined, { value, index, count }: Placed): Naming | undefined {
+  const firm = heading?.names.filter((name) => name.firm) ?? [];
+  const distinct = firm.filter((name, at) => name.quantity !== firm[at - 1]?.quantity);
+  if (count > 1 && distinct.length === count) return distinct[index];
+  return distinct.find((name) => fitsNumbers(name, value));
+}
+
+/** A ratio without an interval: under a ratio's own heading, and no reference category. */
+function isBareRatio(
+  { grid }: Sheet,
+  { value, cell, count }: Placed,
+  over: Naming | undefined,
+): boolean {
+  const { estimate } = value;
+  if (over?.quantity.kind !== 'ratio' || !over.firm || estimate === undefined || count > 1) return false;
+  const isReference = estimate.value === 1 || /ref/i.test(grid.words(cell.row, cell.column));
+  return !isReference && !estimate.percent && estimate.decimals > 0;
+}
+
+function makeResult(
+  sheet: Sheet,
+  row: number,
+  entry: Placed,
+  naming: Naming,
+  inForce: readonly Heading[],
+  placed: readonly Placed[],
+): Result {
+  const { value, cell, column } = entry;
+  const { labels, caption, notes, context, grid } = sheet;
+  const heading = inForce[column];
+  const stated = heading?.label?.level ?? inForce[column + 1]?.label?.level
+    ?? inForce.find(({ label }) => label?.level !== undefined)?.label?.level;
+  const level = stated ?? caption.label?.level ?? notes.label?.level ?? context.customs.level;
+  const p = value.p?.value ?? pBeside(sheet, row, entry, inForce, placed);
+  const adjusted = heading?.adjusted ?? caption.adjusted;
+  const inferred: Inheritable[] = [
+    ...(heading?.names.includes(naming) ? [] : ['measure' as const]),
+    ...(stated === undefined && level !== undefined ? ['level' as const] : []),
+  ];
+  return resultOf(naming, {
+    ...(value.estimate === undefined ? {} : { estimate: value.estimate }),
+    ...(value.limits === undefined ? {} : { limits: value.limits }),
+    ...(level === undefined ? {} : { level }),
+    ...(p === undefined ? {} : { p }),
+    ...(adjusted === undefined ? {} : { adjusted }),
+    span: value.span,
+    type: heading?.label?.type ?? caption.label?.type ?? 'confidence',
+    inferred,
+    cell: { table: grid.table, cell, row: labels.row(row), column: labels.column(column) },
+    about: { term: labels.row(row) },
+  });
+}
+
+/**
+ * The p-value of a row that belongs to an estimate: in the nearest p column to its
+ * right, before the next estimate. One that spans several rows tests them together
+ * and belongs to none of them.
+ */
+function pBeside(
+  { grid, itemsOf }: Sheet,
+  row: number,
+  { column, cell }: Placed,
+  inForce: readonly Heading[],
+  placed: readonly Placed[],
+): PValue | undefined {
+  const next = placed.find((other) => other.column > column && other.value.limits !== undefined);
+  for (let at = cell.column + cell.columnSpan; at < (next?.column ?? inForce.length); at++) {
+    const tests = inForce[at]?.p;
+    const beside = grid.at(row, at);
+    if (tests === undefined || beside === undefined) continue;
+    if (beside.row !== row || beside.rowSpan > 1) return undefined;
+    return pIn(itemsOf(beside), tests);
+  }
+  return undefined;
+}
+
+// 0.03   <0.001   = .02   p<0.05   0.003*
+function pIn(items: readonly Item[], tests: PValue['tests']): PValue | undefined {
+  const said = items.find((item) => item.kind === 'p');
+  if (said !== undefined) return said.value;
+  const at = items.findIndex(({ kind }) => kind === 'number');
+  const number = items[at];
+  if (number?.kind !== 'number' || items.filter(({ kind }) => kind === 'number').length > 1) return undefined;
+  const before = items[at - 1];
+  const relation = (before?.kind === 'relation' ? before.relation : undefined) ?? '=';
+  const { printed } = number;
+  return { relation, printed, tests, span: before === undefined ? printed.span : cover(before.span, printed.span) };
+}

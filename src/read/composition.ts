@@ -1,0 +1,157 @@
+import type {
+  Block, BlockKind, Format, Manuscript, Mark, Notice, Section, Span, Table,
+} from '../model/index.ts';
+import { type PlacedCell, placeCells, type SpanningCell } from './spanning-cells.ts';
+
+/**
+ * A manuscript in the making, for forms that say themselves what is a paragraph, a
+ * heading or a table: their readers write text into it, block after block.
+ */
+export interface Composition {
+  readonly parts: string[];
+  readonly blocks: Block[];
+  readonly tables: Table[];
+  readonly marks: Mark[];
+  readonly notices: Notice[];
+  /** How long the text is so far, in UTF-16 code units. */
+  length: number;
+  open: OpenBlock | undefined;
+}
+
+interface OpenBlock {
+  readonly kind: BlockKind;
+  readonly section: Section;
+  readonly start: number;
+  /** Whether a space is due before the next word. */
+  spaceDue: boolean;
+}
+
+/** An empty manuscript, to be written into. */
+export function blankComposition(): Composition {
+  return {
+    parts: [], blocks: [], tables: [], marks: [], notices: [], length: 0, open: undefined,
+  };
+}
+
+function append(composition: Composition, text: string): void {
+  composition.parts.push(text);
+  composition.length += text.length;
+}
+
+/** Ends the block that is open, if any, and begins another. */
+export function openBlock(composition: Composition, kind: BlockKind, section: Section): void {
+  closeBlock(composition);
+  if (composition.length > 0) append(composition, '\n\n');
+  composition.open = { kind, section, start: composition.length, spaceDue: false };
+}
+
+/** Ends the block that is open; one without a word in it leaves no trace. */
+export function closeBlock(composition: Composition): void {
+  const { open } = composition;
+  composition.open = undefined;
+  if (open === undefined || composition.length === open.start) return;
+  const span = { start: open.start, end: composition.length };
+  composition.blocks.push({ kind: open.kind, section: open.section, span });
+}
+
+/**
+ * Writes into the open block. White space in markup is no text: any run of it,
+ * line ends included, becomes one space between words. Other spaces are kept.
+ */
+export function write(composition: Composition, text: string): void {
+  const { open } = composition;
+  if (open === undefined) return;
+  const words = text.replace(/[ \t\r\n]+/g, ' ');
+  if (words === '') return;
+  const begins = composition.length === open.start;
+  if (words.startsWith(' ') && !begins) open.spaceDue = true;
+  const trimmed = words.trim();
+  if (trimmed === '') return;
+  if (open.spaceDue && !begins) append(composition, ' ');
+  append(composition, trimmed);
+  open.spaceDue = words.endsWith(' ');
+}
+
+/** Begins a new line within the open block, as a line break in a cell does. */
+export function breakLine(composition: Composition): void {
+  const { open } = composition;
+  if (open === undefined || composition.length === open.start) return;
+  append(composition, '\n');
+  open.spaceDue = false;
+}
+
+/** Records that what was written since `start` is raised or lowered. */
+export function markSince(composition: Composition, kind: Mark['kind'], start: number): void {
+  const from = start + (composition.parts.at(-1) === undefined ? 0 : leadingSpace(composition, start));
+  if (composition.length > from) {
+    composition.marks.push({ kind, span: { start: from, end: composition.length } });
+  }
+}
+
+/** A space that was due before a raised mark is no part of it. */
+function leadingSpace({ parts, length }: Composition, start: number): number {
+  let from = length;
+  for (let at = parts.length - 1; at >= 0 && from > start; at--) {
+    from -= (parts[at] as string).length;
+    if (from === start) return parts[at] === ' ' ? 1 : 0;
+  }
+  return 0;
+}
+
+/** Puts a table's cells, written row by row, into their grid. */
+export function closeTable(
+  composition: Composition,
+  label: string,
+  caption: Span | undefined,
+  cells: readonly WrittenCell[],
+): void {
+  const { cells: placed, rowCount, columnCount } = placeCells(cells);
+  const [first, last] = [placed[0], placed.at(-1)];
+  if (first === undefined || last === undefined) return;
+  composition.tables.push({
+    span: { start: first.cell.span.start, end: last.cell.span.end },
+    label,
+    ...(caption === undefined ? {} : { caption }),
+    notes: [],
+    cells: placed.map(({ cell, row, column }: PlacedCell<WrittenCell>) => ({
+      span: cell.span,
+      row,
+      column,
+      rowSpan: cell.rowSpan,
+      columnSpan: cell.columnSpan,
+      header: cell.header,
+    })),
+    rowCount,
+    columnCount,
+  });
+}
+
+/** A cell whose text stands in the composition. */
+export interface WrittenCell extends SpanningCell {
+  readonly span: Span;
+  readonly header: boolean;
+}
+
+/** Adds notes to the tables from `first` on, as found behind them. */
+export function addNotes(composition: Composition, first: number, notes: readonly Span[]): void {
+  for (let at = first; at < composition.tables.length; at++) {
+    const table = composition.tables[at] as Table;
+    composition.tables[at] = { ...table, notes: [...table.notes, ...notes] };
+  }
+}
+
+/** The manuscript that was written. */
+export function finished(composition: Composition, name: string, format: Format): Manuscript {
+  closeBlock(composition);
+  return {
+    name,
+    format,
+    text: composition.parts.join(''),
+    blocks: composition.blocks,
+    tables: composition.tables,
+    lines: [],
+    pages: [],
+    marks: composition.marks,
+    notices: composition.notices,
+  };
+}

@@ -22,12 +22,17 @@ export function valuesIn(items: readonly Item[]): readonly CellValue[] {
   for (let at = 0; at < items.length; at++) {
     const item = items[at] as Item;
     if (item.kind === 'p') attach(values, item);
-    if (item.kind !== 'number') continue;
+    if (item.kind !== 'number' || isBound(items[at - 1])) continue;
     const found = valueAt(items, at, item);
     values.push(found.value);
     at = found.end - 1;
   }
   return values;
+}
+
+/** "<0.001" bounds a p-value; it is no estimate. */
+function isBound(item: Item | undefined): boolean {
+  return item?.kind === 'relation' && item.relation !== '=';
 }
 
 function attach(values: CellValue[], p: PValueItem): void {
@@ -91,8 +96,10 @@ function closes(items: readonly Item[], at: number): boolean {
 }
 
 // 0.95–1.00   (1.56,2.25)   1.02; 3.08
-function isInterval(items: readonly Item[], { joint, start, end }: Pair): boolean {
+function isInterval(items: readonly Item[], { joint, start, end, lower, upper }: Pair): boolean {
   if (joint === 'range') return true;
   const before = items[start - 1];
-  return (before === undefined || before.kind === 'open') && closes(items, end);
+  // "87,6" alone in a cell is a decimal comma in a table that has points elsewhere.
+  const isFraction = lower.decimals > 0 || upper.decimals > 0;
+  return (before?.kind === 'open' || (before === undefined && isFraction)) && closes(items, end);
 }

@@ -18,12 +18,14 @@ export interface Heading {
   readonly spread: boolean;
 }
 
-const PLAIN = new Set(['n', 'no', 'number', 'mean', 'median', 'iqr', 'sd', 'range', 'gmt', 'score', 'percent',
-  'years', 'months', 'days', 'frequency', 'events', 'cases', 'total', 'deaths', 'person', 'persons', 'se',
-  'interquartile', 'percentage', 'prevalence', 'rate', 'incidence', 'coefficient', 'difference', 'beta', 'b',
-  'β', 'r', 'nnt', 'weight', 'correlation', 'sensitivity', 'specificity', 'proportion', 'size', 'count']);
+const PLAIN = new Set(['n', 'no', 'number', 'iqr', 'sd', 'range', 'gmt', 'percent', 'frequency', 'deaths',
+  'person', 'persons', 'se', 'interquartile', 'percentage', 'nnt', 'count']);
 
-const P_HEADINGS = new Set(['p', 'ptrend', 'pvalue', 'pinteraction', 'sig', 'pint', 'phet']);
+const P_HEADINGS = new Set(['p', 'ptrend', 'pvalue', 'pinteraction', 'sig', 'pint', 'phet', 'pfor']);
+
+/** Words that may stand before the P of a heading: "Wald p value", "Log-rank P". */
+const BEFORE_P = new Set(['wald', 'log', 'rank', 'logrank', 'likelihood', 'ratio', 'adjusted', 'unadjusted',
+  'nominal', 'two', 'one', 'sided', 'stratified', 'test', 'crude', 'multivariate', 'univariate', 'overall']);
 
 /** Reads what the items of a heading say. */
 export function headingOf(items: readonly Item[]): Heading {
@@ -57,7 +59,8 @@ function adjustmentIn(items: readonly Item[], names: readonly NameItem[]): boole
 
 // P   P-value   p for trend   Ptrend   Sig.
 function pHeading(items: readonly Item[]): PValue['tests'] | undefined {
-  const [first] = items.filter(({ kind }) => kind !== 'other' && kind !== 'open' && kind !== 'star');
+  const first = items.find((item) => item.kind === 'name' || item.kind === 'label' || item.kind === 'number'
+    || (item.kind === 'word' && !BEFORE_P.has(item.word)));
   if (first?.kind !== 'word' || !P_HEADINGS.has(first.word)) return undefined;
   const words = items.flatMap((item) => (item.kind === 'word' ? [item.word] : [])).join(' ');
   if (/trend/.test(words)) return 'trend';
@@ -71,6 +74,38 @@ function limitIn(items: readonly Item[]): Heading['limit'] {
   return words.has('upper') || words.has('ucl') || words.has('ul') ? 'upper' : undefined;
 }
 
+// MERS cases (n = 36): a size, not what the column holds
+function isSampleSize(items: readonly Item[], at: number): boolean {
+  const item = items[at];
+  return item?.kind === 'word' && item.word === 'n' && items[at + 1]?.kind === 'relation';
+}
+
+/** "No reported progression" denies; "No. of patients" counts. */
+function isDenial(items: readonly Item[], at: number): boolean {
+  const item = items[at];
+  return item?.kind === 'word' && item.word === 'no' && items[at + 1]?.kind === 'word';
+}
+
+/** The heading of a column from those of its levels, the lowest speaking first. */
+export function joinHeadings(levels: readonly Heading[]): Heading {
+  const lowestFirst = levels.toReversed();
+  const names = lowestFirst.flatMap((level) => level.names);
+  const isRatio = names.some(({ quantity, firm }) => firm && quantity.kind === 'ratio');
+  const label = lowestFirst.find((level) => level.label !== undefined)?.label;
+  const adjusted = lowestFirst.find((level) => level.adjusted !== undefined)?.adjusted;
+  const limit = lowestFirst.find((level) => level.limit !== undefined)?.limit;
+  const p = lowestFirst[0]?.p;
+  return {
+    names,
+    ...(label === undefined ? {} : { label }),
+    ...(adjusted === undefined ? {} : { adjusted }),
+    ...(p === undefined ? {} : { p }),
+    ...(limit === undefined ? {} : { limit }),
+    plain: !isRatio && levels.some(({ plain }) => plain),
+    spread: levels.some(({ spread }) => spread),
+  };
+}
+
 const SPREADS = new Set(['iqr', 'sd', 'gmt', 'interquartile', 'range', 'quartiles']);
 
 function isNamedSpread(item: Item): boolean {
@@ -82,6 +117,6 @@ function isNamedSpread(item: Item): boolean {
 function isPlain(items: readonly Item[], names: readonly Naming[]): boolean {
   if (names.some(({ quantity, firm }) => firm && quantity.kind === 'ratio')) return false;
   if (names.some(({ quantity }) => quantity.kind !== 'ratio')) return true;
-  return items.some((item) => item.kind === 'percent' || item.kind === 'plus-minus'
-    || (item.kind === 'word' && PLAIN.has(item.word)));
+  return items.some((item, at) => item.kind === 'percent' || item.kind === 'plus-minus'
+    || (item.kind === 'word' && PLAIN.has(item.word) && !isSampleSize(items, at) && !isDenial(items, at)));
 }

@@ -11,7 +11,7 @@ import { type Customs, resultOf } from '../resolve/results.ts';
 import type { Naming } from '../vocabulary.ts';
 import { type CellValue, valuesIn } from './cell-values.ts';
 import { type Grid, gridOf } from './grid.ts';
-import { type Heading, headingOf } from './heading.ts';
+import { type Heading, headingOf, joinHeadings } from './heading.ts';
 import { type Labels, labelsOf } from './labels.ts';
 
 /** What a manuscript tells of how its cells are to be read. */
@@ -31,6 +31,8 @@ interface Sheet {
   readonly caption: Heading;
   readonly notes: Heading;
   readonly context: TableContext;
+  /** Whether any number of the table is negative, so that it holds no ratios alone. */
+  readonly hasNegative: () => boolean;
 }
 
 /**
@@ -74,6 +76,8 @@ function sheetOf(table: Table, context: TableContext): Sheet {
     caption: headingOf(table.caption === undefined ? [] : read(table.caption)),
     notes: headingOf(table.notes.flatMap(read)),
     context,
+    hasNegative: () => table.cells.some((cell) => itemsOf(cell).some((item) =>
+      item.kind === 'number' && item.printed.value < 0)),
   };
 }
 
@@ -85,8 +89,14 @@ function columnHeadings({ grid, labels, itemsOf }: Sheet): Heading[] {
       const cell = grid.at(row, column);
       if (cell !== undefined && cells.at(-1) !== cell) cells.push(cell);
     }
-    return headingOf(cells.flatMap(itemsOf));
+    return joinHeadings(cells.map((cell) => headingOf(itemsOf(cell))).filter(isSaid));
   });
+}
+
+/** Whether a level of a heading says anything at all. */
+function isSaid(heading: Heading): boolean {
+  return heading.names.length > 0 || heading.label !== undefined || heading.p !== undefined
+    || heading.limit !== undefined || heading.plain || heading.adjusted !== undefined;
 }
 
 /**
@@ -95,6 +105,13 @@ function columnHeadings({ grid, labels, itemsOf }: Sheet): Heading[] {
  */
 function replaceHeadings({ grid, itemsOf }: Sheet, row: number, inForce: Heading[]): boolean {
   if (grid.isHeaderRow(row)) return true;
+  const first = grid.at(row, 0);
+  if (first !== undefined && first.columnSpan >= grid.table.columnCount - 1) {
+    const heading = headingOf(itemsOf(first));
+    const names = heading.names.some(({ firm, quantity }) => firm && quantity.kind === 'ratio');
+    if (names && heading.label !== undefined) inForce.fill(heading);
+    return true;
+  }
   const replaced = new Map<number, Heading>();
   for (let column = 1; column < grid.table.columnCount; column++) {
     const cell = grid.at(row, column);
@@ -125,13 +142,57 @@ function resultsInRow(
   row: number,
   inForce: readonly Heading[],
 ): readonly Result[] {
-  const placed = joinedIntervals(placedInRow(sheet, row), inForce);
+  const placed = joinedIntervals(stacked(sheet, row), inForce);
   const margin = headingOf(labelItems(sheet, row));
+  const below = headingOf(labelItems(sheet, row + 1));
   return placed.flatMap((entry) => {
     const naming = namingOf(sheet, entry, margin, inForce);
     if (naming === undefined) return [];
-    return [makeResult(sheet, row, entry, naming, inForce, placed)];
+    const result = makeResult(sheet, row, entry, naming, inForce, placed);
+    const p = below.p === undefined || result.p !== undefined ? undefined : pBelow(sheet, row, entry, below.p);
+    return [p === undefined ? result : { ...result, p }];
   });
+}
+
+/**
+ * The values of a row, with the intervals that stand in the row below.
+ *
+ * ```
+ * Compound population | 0.97        or   HR      | 0.606
+ *                     | (0.95–1.00)      90% CI  | 0.425, 0.864
+ * ```
+ */
+function stacked(sheet: Sheet, row: number): readonly Placed[] {
+  const own = placedInRow(sheet, row);
+  if (!own.some(isLoneEstimate) || !continuesBelow(sheet, row)) return own;
+  const below = placedInRow(sheet, row + 1);
+  return own.map((entry) => {
+    const interval = below.find(({ column }) => column === entry.column);
+    return isLoneEstimate(entry) && isInterval(interval)
+      ? { ...withLimits(entry, interval.value.limits, interval), cell: entry.cell }
+      : entry;
+  });
+}
+
+/** Whether the row below has no label of its own, or one that only announces intervals. */
+function continuesBelow(sheet: Sheet, row: number): boolean {
+  const { grid } = sheet;
+  const label = grid.at(row + 1, 0);
+  if (row + 1 >= grid.table.rowCount) return false;
+  if (label === grid.at(row, 0) || grid.words(row + 1, 0) === '') return true;
+  const heading = headingOf(labelItems(sheet, row + 1));
+  return heading.label !== undefined && heading.names.length === 0;
+}
+
+/** The p-value in the row below, where that row holds p-values. */
+function pBelow(
+  { grid, itemsOf }: Sheet,
+  row: number,
+  { column }: Placed,
+  tests: PValue['tests'],
+): PValue | undefined {
+  const cell = grid.at(row + 1, column);
+  return cell === undefined ? undefined : pIn(itemsOf(cell), tests, 0, 1);
 }
 
 function placedInRow({ grid, itemsOf }: Sheet, row: number): readonly Placed[] {
@@ -212,7 +273,8 @@ function withLimits(
 ): Placed {
   const { estimate } = entry.value;
   const p = value.p ?? entry.value.p;
-  const span = estimate === undefined ? limits.span : cover(estimate.span, limits.span);
+  const isBeside = cell.row === entry.cell.row && estimate !== undefined;
+  const span = isBeside ? cover(estimate.span, limits.span) : (estimate?.span ?? limits.span);
   return {
     ...entry,
     cell: { ...entry.cell, columnSpan: cell.column + cell.columnSpan - entry.cell.column },
@@ -238,17 +300,30 @@ function namingOf(
   const over = nameFor(heading, entry);
   if (value.limits === undefined) return isBareRatio(sheet, entry, over) ? over : undefined;
   if (value.estimate === undefined) return undefined;
+  if (isConstant(sheet, entry)) return AN_AMOUNT;
   if (over !== undefined) return over;
   if (heading?.plain) return AN_AMOUNT;
   const beside = nameFor(margin, entry);
   if (beside !== undefined) return beside;
   if (margin.spread) return AN_AMOUNT;
   const { caption, notes, context } = sheet;
-  const inherited = nameFor(caption, entry) ?? (caption.spread ? AN_AMOUNT : nameFor(notes, entry));
+  const inherited = nameFor(caption, entry)
+    ?? (caption.spread || saysOther(caption) ? AN_AMOUNT : nameFor(notes, entry));
   if (inherited !== undefined) return inherited;
   if (!fitsNumbers(A_RATIO, value)) return AN_AMOUNT;
   const announced = heading?.label ?? caption.label ?? notes.label;
-  return announced === undefined ? undefined : (context.customs.naming ?? AN_AMOUNT);
+  if (announced === undefined) return undefined;
+  return sheet.hasNegative() ? AN_AMOUNT : (context.customs.naming ?? AN_AMOUNT);
+}
+
+/** The intercept of a model is no ratio of anything. */
+function isConstant({ grid }: Sheet, { cell }: Placed): boolean {
+  return /^\(?(constant|intercept)\b/i.test(grid.words(cell.row, 0));
+}
+
+/** Whether a caption speaks of shares, rates or means, if only loosely. */
+function saysOther({ names }: Heading): boolean {
+  return names.some(({ quantity }) => quantity.kind !== 'ratio');
 }
 
 /**
@@ -316,28 +391,42 @@ function makeResult(
 function pBeside(
   { grid, itemsOf }: Sheet,
   row: number,
-  { column, cell }: Placed,
+  { column, cell, index, count }: Placed,
   inForce: readonly Heading[],
   placed: readonly Placed[],
 ): PValue | undefined {
   const next = placed.find((other) => other.column > column && other.value.limits !== undefined);
-  for (let at = cell.column + cell.columnSpan; at < (next?.column ?? inForce.length); at++) {
-    const tests = inForce[at]?.p;
-    const beside = grid.at(row, at);
-    if (tests === undefined || beside === undefined) continue;
-    if (beside.row !== row || beside.rowSpan > 1) return undefined;
-    return pIn(itemsOf(beside), tests);
-  }
-  return undefined;
+  const isP = (at: number): boolean => inForce[at]?.p !== undefined;
+  let at = cell.column + cell.columnSpan;
+  while (at < (next?.column ?? inForce.length) && !isP(at)) at++;
+  if (!isP(at) || at >= (next?.column ?? inForce.length)) at = precedes(inForce, column) ? column - 1 : -1;
+  const beside = grid.at(row, at);
+  const tests = inForce[at]?.p;
+  if (tests !== 'result' || beside === undefined) return undefined;
+  if (beside.row !== row || beside.rowSpan > 1) return undefined;
+  return pIn(itemsOf(beside), tests, index, count);
+}
+
+/** Whether a table puts p-values before their estimates: "p | OR (95% CI)". */
+function precedes(inForce: readonly Heading[], column: number): boolean {
+  const isRatio = (heading: Heading | undefined): boolean => heading?.names.some(({ quantity }) =>
+    quantity.kind === 'ratio') === true;
+  return inForce[column - 1]?.p !== undefined && !isRatio(inForce[column - 2]);
 }
 
 // 0.03   <0.001   = .02   p<0.05   0.003*
-function pIn(items: readonly Item[], tests: PValue['tests']): PValue | undefined {
+function pIn(
+  items: readonly Item[],
+  tests: PValue['tests'],
+  index: number,
+  count: number,
+): PValue | undefined {
   const said = items.find((item) => item.kind === 'p');
   if (said !== undefined) return said.value;
-  const at = items.findIndex(({ kind }) => kind === 'number');
+  const numbers = items.flatMap(({ kind }, at) => (kind === 'number' ? [at] : []));
+  const at = numbers[index] ?? -1;
   const number = items[at];
-  if (number?.kind !== 'number' || items.filter(({ kind }) => kind === 'number').length > 1) return undefined;
+  if (number?.kind !== 'number' || numbers.length !== count) return undefined;
   const before = items[at - 1];
   const relation = (before?.kind === 'relation' ? before.relation : undefined) ?? '=';
   const { printed } = number;

@@ -26,8 +26,11 @@ export interface Printed {
 export interface PValue {
   readonly relation: Relation;
   readonly printed: Printed;
-  /** What the p-value tests, where the text says so; a plain p tests the result itself. */
-  readonly tests: 'result' | 'trend' | 'interaction' | 'heterogeneity';
+  /**
+   * What the p-value tests, where the text says so; a plain p tests the result itself,
+   * one that spans all categories of a factor tests the factor as a whole.
+   */
+  readonly tests: 'result' | 'factor' | 'trend' | 'interaction' | 'heterogeneity';
   /** True for "one-sided p", false for "two-sided p", absent where nothing is said. */
   readonly oneSided?: boolean;
   readonly span: Span;

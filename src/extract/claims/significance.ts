@@ -8,7 +8,7 @@ export interface SaidOfSignificance {
   readonly span: Span;
 }
 
-const NEGATIONS = new Set(['no', 'not', 'non', 'neither', 'nor', 'without', 'never', 'lacked', 'lack',
+const NEGATIONS = new Set(['no', 'not', 'nonstatistically', 'neither', 'nor', 'without', 'never', 'lacked', 'lack',
   'cannot', 'failed', 'none', "didn't", "wasn't", "weren't", 'absence', 'loses', 'lost', 'fails']);
 
 const SIGNIFICANT = new Set(['significant', 'significantly', 'significance']);
@@ -52,7 +52,7 @@ function stated(tokens: readonly Token[]): SaidOfSignificance | undefined {
     if (INSIGNIFICANT.has(token.word)) return said(false, 'stated', token.span);
     if (!SIGNIFICANT.has(token.word)) continue;
     if (wordsBefore(tokens, at, 3).some(({ word }) => WEAKENING.has(word))) return undefined;
-    const negation = wordsBefore(tokens, at, 5).find(({ word }) => NEGATIONS.has(word));
+    const negation = negationBefore(tokens, at);
     if (negation !== undefined) return said(false, 'stated', cover(negation.span, token.span));
     if (token.word === 'significance') continue;
     return said(true, 'stated', token.span);
@@ -60,16 +60,49 @@ function stated(tokens: readonly Token[]): SaidOfSignificance | undefined {
   return undefined;
 }
 
+const FINDING = new Set(['find', 'show', 'observe', 'detect', 'demonstrate', 'reveal', 'identify', 'found',
+  'shown', 'observed', 'detected', 'demonstrated', 'revealed', 'reach', 'achieve', 'attain']);
+
+// not statistically significant   non-significant   did not find that the ferry had a significant
+// ^^^                             ^^^                   ^^^ ^^^^
+function negationBefore(tokens: readonly Token[], at: number): Token | undefined {
+  const words = wordsBefore(tokens, at, 12);
+  const near = words.slice(0, 5).find(({ word }) => NEGATIONS.has(word));
+  if (near !== undefined) return near;
+  const [first, second] = words;
+  if (first?.word === 'non') return first;
+  if (second?.word === 'non' && first?.word === 'statistically') return second;
+  const finding = words.findIndex(({ word }) => FINDING.has(word));
+  const before = finding < 0 ? undefined : words[finding + 1];
+  return before !== undefined && NEGATIONS.has(before.word) ? before : undefined;
+}
+
 function denied(tokens: readonly Token[]): SaidOfSignificance | undefined {
   for (let at = tokens.length - 1; at >= 0; at--) {
     const token = tokens[at] as Token;
-    if (SAMENESS.has(token.word)) return said(false, 'no association', token.span);
+    if (isSame(tokens, at)) return said(false, 'no association', token.span);
     if (!ASSOCIATION.has(token.word)) continue;
     const negation = wordsBefore(tokens, at, 4).find(({ word }) => NEGATIONS.has(word));
-    if (negation !== undefined) return said(false, 'no association', cover(negation.span, token.span));
+    if (negation !== undefined && !isOfOther(tokens, at)) {
+      return said(false, 'no association', cover(negation.span, token.span));
+    }
     return undefined;
   }
   return undefined;
+}
+
+// was unrelated   were similar   but not: similar results, similar to that of
+function isSame(tokens: readonly Token[], at: number): boolean {
+  const [word, before, next] = [tokens[at]?.word ?? '', tokens[at - 1]?.word, tokens[at + 1]?.word];
+  if (!SAMENESS.has(word)) return false;
+  if (word.startsWith('un')) return true;
+  return (before === 'was' || before === 'were') && next !== 'to';
+}
+
+/** "No evidence of heterogeneity" denies no association. */
+function isOfOther(tokens: readonly Token[], at: number): boolean {
+  return tokens.slice(at + 1, at + 4).some(({ word }) =>
+    word === 'heterogeneity' || word === 'bias' || word === 'interaction');
 }
 
 function implied(tokens: readonly Token[]): SaidOfSignificance | undefined {

@@ -1,5 +1,4 @@
 import { type Count, cover, type Printed } from '../../model/index.ts';
-import { isMeasuringWord } from './intervals.ts';
 import type { Item } from './item.ts';
 import { type CountNumber, numberInWords } from './number-words.ts';
 
@@ -57,8 +56,13 @@ function isCountable(items: readonly Item[], at: number, { value }: Printed): bo
   if (before?.kind === 'relation') return isSampleSize(items, at);
   if (before?.kind === 'dash' || before?.kind === 'slash' || before?.kind === 'plus-minus') return false;
   const isYear = value >= 1900 && value < 2100 && before?.kind === 'word' && before.word === 'in';
-  return !isYear && !(before?.kind === 'word' && before.word !== 'in' && isMeasuringWord(before.word));
+  return !isYear && !(before?.kind === 'word' && NUMBERED.has(before.word));
 }
+
+/** Words whose number is a name or a bound, not a count: "grade 3", "at least 5". */
+const NUMBERED = new Set(['grade', 'stage', 'phase', 'type', 'day', 'week', 'month', 'year', 'table', 'figure',
+  'fig', 'model', 'age', 'aged', 'score', 'class', 'version', 'per', 'than', 'least', 'level', 'ref',
+  'quartile', 'quintile', 'tertile', 'every', 'each', 'step', 'visit', 'group', 'arm', 'cycle', 'within']);
 
 // n = 54
 function isSampleSize(items: readonly Item[], at: number): boolean {
@@ -73,14 +77,14 @@ function withTotal(text: string, items: readonly Item[], number: CountNumber): F
   const start = slash ? number.end + 1 : afterOf(items, number.end);
   const total = start === undefined ? undefined : wholeNumber(text, items, start);
   if (total === undefined || items[total.end]?.kind === 'slash') return undefined;
-  const bracket = openWithin(items, total.end, slash ? 1 : 5);
+  const bracket = openWithin(items, total.end, 5);
   const percent = bracket === undefined ? undefined : percentAt(items, bracket + 1);
   const isSingle = bracket !== undefined && endsQuantity(items, bracket + 2);
   if (percent !== undefined && isSingle) {
-    return found({ count: number.printed, total: total.printed, percent }, bracket as number + 2);
+    return found(items, { count: number.printed, total: total.printed, percent }, bracket as number + 2);
   }
   if (!isPlausible(number.printed, total.printed, slash)) return undefined;
-  return found({ count: number.printed, total: total.printed }, total.end);
+  return found(items, { count: number.printed, total: total.printed }, total.end);
 }
 
 // 45/120   but not: 2008/2009   1/2   01/001   120/80
@@ -146,8 +150,8 @@ function withPercent(
   const total = start === undefined ? undefined : wholeNumber(text, items, start);
   const isShareOfOther = !isClosed && start !== undefined && total === undefined;
   if (isShareOfOther) return undefined;
-  if (total === undefined) return found({ count, percent }, bracket + (isClosed ? 3 : 2));
-  return found({ count, percent, total: total.printed }, total.end);
+  if (total === undefined) return found(items, { count, percent }, bracket + 2);
+  return found(items, { count, percent, total: total.printed }, total.end);
 }
 
 function sampleWithPercent(items: readonly Item[], number: CountNumber): Found | undefined {
@@ -155,7 +159,7 @@ function sampleWithPercent(items: readonly Item[], number: CountNumber): Found |
   const percent = percentAt(items, number.end + 1);
   const joined = separator === 'semicolon' || separator === 'comma' || separator === 'open';
   if (!joined || percent === undefined || !endsQuantity(items, number.end + 2)) return undefined;
-  return found({ count: number.printed, percent }, number.end + 2);
+  return found(items, { count: number.printed, percent }, number.end + 2);
 }
 
 // 90% [44/49]   84.6% (n=369)   43% (26 of 60)   18% (5)
@@ -175,12 +179,15 @@ function behindPercent(
   const end = total?.end ?? number.end;
   if (total === undefined && items[end]?.kind !== 'close') return undefined;
   const count = { count: number.printed, percent };
-  return found(total === undefined ? count : { ...count, total: total.printed }, end);
+  return found(items, total === undefined ? count : { ...count, total: total.printed }, end);
 }
 
-function found(parts: Omit<Count, 'span'>, end: number): Found {
+/** The count, from its first number to the bracket that closes behind its last. */
+function found(items: readonly Item[], parts: Omit<Count, 'span'>, end: number): Found {
   const spans = [parts.count, parts.total, parts.percent].flatMap((part) => part?.span ?? []);
   const [first, ...others] = spans;
   if (first === undefined) throw new Error('a count without a number');
-  return { count: { ...parts, span: cover(first, ...others) }, end };
+  const close = items[end];
+  const whole = close?.kind === 'close' ? cover(first, ...others, close.span) : cover(first, ...others);
+  return { count: { ...parts, span: whole }, end };
 }

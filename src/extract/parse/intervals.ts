@@ -212,11 +212,6 @@ const MEASURING = new Set(['per', 'each', 'every', 'by', 'at', 'aged', 'age', 'o
   'table', 'figure', 'model', 'group', 'quartile', 'quintile', 'tertile', 'score', 'in', 'during',
   'until', 'since', 'before', 'level', 'class', 'ref', 'version', 'top', 'first', 'last', 'fig']);
 
-/** Whether a word makes the number behind it a unit, an age, a time or a label: "per 10". */
-export function isMeasuringWord(word: string): boolean {
-  return MEASURING.has(word);
-}
-
 /** Whether a number counts years, doses or ages, so that an estimate stands further back. */
 function isMeasuring(items: readonly Item[], at: number): boolean {
   const before = items[at - 1];

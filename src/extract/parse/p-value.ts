@@ -56,7 +56,7 @@ const TESTS: Readonly<Record<string, PValue['tests']>> = {
 
 const HEADING_WORDS = new Set(['value', 'values', 'val', 'for', 'of', 'the', 'linear', 'trend',
   'trends', 'interaction', 'interactions', 'int', 'heterogeneity', 'het', 'difference', 'test',
-  'log', 'rank', 'logrank', 'adjusted', 'adj', 'corrected', 'comparison', 'overall', 'all']);
+  'non', 'inferiority', 'noninferiority', 'superiority', 'log', 'rank', 'logrank', 'adjusted', 'adj', 'corrected', 'comparison', 'overall', 'all']);
 
 /** Reads on over "value for trend" up to where a relation or the number must stand. */
 function readHeading(tokens: readonly Token[], at: number): Heading {

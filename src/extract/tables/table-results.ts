@@ -318,7 +318,7 @@ function namingOf(
 
 /** The intercept of a model is no ratio of anything. */
 function isConstant({ grid }: Sheet, { cell }: Placed): boolean {
-  return /^\(?(constant|intercept)\b/i.test(grid.words(cell.row, 0));
+  return /^\(?(constant|intercept)(?!\p{L})/iu.test(grid.words(cell.row, 0));
 }
 
 /** Whether a caption speaks of shares, rates or means, if only loosely. */
@@ -385,8 +385,7 @@ function makeResult(
 
 /**
  * The p-value of a row that belongs to an estimate: in the nearest p column to its
- * right, before the next estimate. One that spans several rows tests them together
- * and belongs to none of them.
+ * right, before the next estimate. One that spans several rows tests them together.
  */
 function pBeside(
   { grid, itemsOf }: Sheet,
@@ -403,8 +402,7 @@ function pBeside(
   const beside = grid.at(row, at);
   const tests = inForce[at]?.p;
   if (tests !== 'result' || beside === undefined) return undefined;
-  if (beside.row !== row || beside.rowSpan > 1) return undefined;
-  return pIn(itemsOf(beside), tests, index, count);
+  return pIn(itemsOf(beside), beside.rowSpan > 1 ? 'factor' : tests, index, count);
 }
 
 /** Whether a table puts p-values before their estimates: "p | OR (95% CI)". */
@@ -422,7 +420,7 @@ function pIn(
   count: number,
 ): PValue | undefined {
   const said = items.find((item) => item.kind === 'p');
-  if (said !== undefined) return said.value;
+  if (said !== undefined) return { ...said.value, tests };
   const numbers = items.flatMap(({ kind }, at) => (kind === 'number' ? [at] : []));
   const at = numbers[index] ?? -1;
   const number = items[at];

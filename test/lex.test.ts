@@ -101,6 +101,20 @@ describe('whatever the text', () => {
     }), { numRuns: 2000 });
   });
 
+  it('ends, wherever raised marks begin and end', () => {
+    const marked = fc.tuple(anyText, fc.array(fc.nat(60), { maxLength: 6 }));
+    fc.assert(fc.property(marked, ([text, cuts]) => {
+      const ends = [...new Set(cuts.filter((cut) => cut < text.length))].sort((a, b) => a - b);
+      const marks = ends.slice(1).map((end, at): Mark => ({
+        kind: 'superscript', span: { start: ends[at] as number, end },
+      }));
+      for (const { span, printed } of tokensOf(text, marks)) {
+        expect(span.end).toBeGreaterThan(span.start);
+        if (printed !== undefined) expect(quote(text, printed.span)).toBe(printed.text);
+      }
+    }), { numRuns: 2000 });
+  });
+
   it('keeps tokens in order, apart, and within the text', () => {
     fc.assert(fc.property(anyText, (text) => {
       let end = 0;

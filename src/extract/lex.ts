@@ -120,7 +120,7 @@ const INTRODUCES = new Set(
 // CI.99-1.83   (.72)   but not: reported.5 Other   or: P<.001).5 Other
 //   ^^^         ^^^
 function isLeadingPoint(scan: Scan, at: number): boolean {
-  if (!startsNumber(scan.text, at)) return false;
+  if (!startsNumber(scan.text, at) || markAt(scan, at).limit <= at + 1) return false;
   if (at === 0 || scan.spaced) return true;
   const before = classAt(scan.text, at - 1);
   if (before === CharacterClass.close || before === CharacterClass.digit) return false;
@@ -135,7 +135,10 @@ function readNumber(scan: Scan, start: number, digits: number): number {
   const barePower = previous?.relation !== undefined && last(scan, 2)?.word === 'p';
   const isSize = last(scan, 2)?.word === 'n' && previous?.relation === '=';
   const spacedThousands = previous?.kind === 'slash' || previous?.word === 'of' || isSize;
-  const context = { text, limit, style, barePower, split: introduced, spacedThousands };
+  const partner = last(scan, 2)?.printed;
+  const isJoint = previous?.kind === 'comma' || previous?.kind === 'dash' || previous?.word === 'to';
+  const stray = isJoint && partner?.decimals === 2 && !partner.percent && scan.spaced;
+  const context = { text, limit, style, barePower, split: introduced, spacedThousands, stray };
   const number = scanNumber(context, start, digits);
   const { span } = number;
   const end = endWithPercent(text, span.end, scan.end);
@@ -213,6 +216,7 @@ function readDash(scan: Scan, at: number): number {
 //    ^               ^            ^      ^
 function isSign(scan: Scan, at: number): boolean {
   if (!SIGNS.includes(scan.text[at] as string) || !startsNumber(scan.text, at + 1)) return false;
+  if (markAt(scan, at).limit <= at + 1) return false;
   const previous = last(scan);
   switch (previous?.kind) {
     case 'number':

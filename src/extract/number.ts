@@ -5,6 +5,8 @@ import { CharacterClass, classAt, superscriptDigit } from './characters.ts';
 export interface NumberStyle {
   /** Whether "0,72" is a decimal fraction. */
   readonly decimalComma: boolean;
+  /** Whether it is a table's cell that is read, which holds numbers and no sentences. */
+  readonly cell?: boolean;
 }
 
 /** Whether a number can begin at `at`: a digit, or a decimal point with a digit after it. */
@@ -26,6 +28,8 @@ export interface NumberContext {
   readonly split: boolean;
   /** Whether a plain space may part thousands, as in a total: "151/10 080", "of 10 080". */
   readonly spacedThousands: boolean;
+  /** Whether the number before has two decimals and asks for a partner that has too. */
+  readonly stray: boolean;
 }
 
 /**
@@ -97,15 +101,33 @@ function endOfWhole(context: NumberContext, at: number): number {
   return end;
 }
 
+// 2,43 (1.37–4.29)   (0.59, 1,51)   but not: (17,48)   1,234
+// ^^^^                      ^^^^
+/**
+ * Whether a comma is a decimal point that slipped in among points: one or two digits
+ * stand behind it, and where it stands it can separate nothing.
+ */
+function isStrayComma({ text, limit, style, stray }: NumberContext, comma: number): boolean {
+  const end = endOfDigits(text, comma + 1, Math.min(limit, comma + 4));
+  const digits = end - comma - 1;
+  if (digits < 1 || digits > 2 || classAt(text, end) === CharacterClass.point) return false;
+  if (stray) return digits === 2;
+  if (style.cell !== true) return false;
+  const next = classAt(text, end);
+  const before = comma > 1 ? text.slice(Math.max(0, comma - 3), comma) : '';
+  return next === CharacterClass.dash || next === CharacterClass.open || !/[(\[]/.test(before);
+}
+
 /** Where the digits behind the decimal point begin, if there is a fraction at all. */
 function startOfFraction(context: NumberContext, point: number): number | undefined {
   const { text, limit, style } = context;
   const kind = classAt(text, point);
+  if (kind === CharacterClass.comma && isStrayComma(context, point)) return point + 1;
   const isPoint = kind === CharacterClass.point
     || (style.decimalComma && kind === CharacterClass.comma);
   if (!isPoint || point + 1 >= limit) return undefined;
   if (isDigit(text, point + 1)) return point + 1;
-  const isSplit = context.split || (point > 0 && text[point - 1] === '0' && !isDigit(text, point - 2));
+  const isSplit = context.split || style.cell === true || (point > 0 && text[point - 1] === '0' && !isDigit(text, point - 2));
   if (!isSplit || text[point + 1] !== ' ' || !isDigit(text, point + 2)) return undefined;
   return point + 2;
 }

@@ -22,7 +22,7 @@ const INSIGNIFICANT = new Set(['insignificant', 'insignificantly', 'nonsignifica
 const ASSOCIATION = new Set(('association associations associated relationship relation related '
   + 'difference differences differ differed effect effects impact influence influenced correlation '
   + 'correlated evidence increase increased increases change changed benefit improve improved reduce '
-  + 'reduced reduces predict predicted predictive predictor predictors affect affected linked link').split(' '));
+  + 'reduced reduces predict predicted predictive predictor predictors affect affected linked link observed seen').split(' '));
 
 const SAMENESS = new Set(['unrelated', 'unaffected', 'unchanged', 'similar', 'comparable']);
 
@@ -54,11 +54,15 @@ function stated(tokens: readonly Token[]): SaidOfSignificance | undefined {
     if (wordsBefore(tokens, at, 3).some(({ word }) => WEAKENING.has(word))) return undefined;
     const negation = negationBefore(tokens, at);
     if (negation !== undefined) return said(false, 'stated', cover(negation.span, token.span));
-    if (token.word === 'significance') continue;
+    if (token.word === 'significance' || NOT_OF_EFFECTS.has(tokens[at + 1]?.word ?? '')) continue;
     return said(true, 'stated', token.span);
   }
   return undefined;
 }
+
+/** Behind "significant", these speak of amounts and not of a test. */
+const NOT_OF_EFFECTS = new Set(['level', 'levels', 'number', 'numbers', 'proportion', 'amount', 'role', 'part',
+  'burden', 'portion', 'other', 'others', 'factor', 'limitation', 'challenge', 'problem', 'cause']);
 
 const FINDING = new Set(['find', 'show', 'observe', 'detect', 'demonstrate', 'reveal', 'identify', 'found',
   'shown', 'observed', 'detected', 'demonstrated', 'revealed', 'reach', 'achieve', 'attain']);

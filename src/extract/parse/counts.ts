@@ -53,10 +53,20 @@ function wholeNumber(text: string, items: readonly Item[], at: number): CountNum
 // not: grade 3 (25%)   age ≥65 (45%)   in 2005 (45%)
 function isCountable(items: readonly Item[], at: number, { value }: Printed): boolean {
   const before = items[at - 1];
+  if (continuesWords(items, at)) return false;
   if (before?.kind === 'relation') return isSampleSize(items, at);
   if (before?.kind === 'dash' || before?.kind === 'slash' || before?.kind === 'plus-minus') return false;
   const isYear = value >= 1900 && value < 2100 && before?.kind === 'word' && before.word === 'in';
   return !isYear && !(before?.kind === 'word' && NUMBERED.has(before.word));
+}
+
+// three hundred and eleven: the whole is not read, so its end must not be either
+function continuesWords(items: readonly Item[], at: number): boolean {
+  const isLarge = (item: Item | undefined): boolean =>
+    item?.kind === 'word' && (item.word === 'hundred' || item.word === 'thousand');
+  const before = items[at - 1];
+  const isAnd = before?.kind === 'word' && before.word === 'and';
+  return isLarge(before) || (isAnd && isLarge(items[at - 2])) || isLarge(items[at + 1]);
 }
 
 /** Words whose number is a name or a bound, not a count: "grade 3", "at least 5". */

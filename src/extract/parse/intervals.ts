@@ -200,6 +200,7 @@ function estimateBefore(passage: Passage, label: number, free: number): number |
     isNamed ||= item.kind === 'name';
     if (item.kind === 'close') at = Math.max(free, passage.partners[at] ?? at);
     if (item.kind !== 'number' || (item.attached && items[at - 1]?.kind !== 'name')) continue;
+    if (items[at - 1]?.kind === 'slash') continue;
     if ((words === 0 && !isNamed) || !isMeasuring(items, at)) return at;
     if (words <= 3 && !isNamed) measuring ??= at;
   }

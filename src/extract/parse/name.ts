@@ -2,7 +2,7 @@ import { cover, quote } from '../../model/index.ts';
 import { abbreviated, type Definitions } from '../definitions.ts';
 import { findPhrase } from '../phrases.ts';
 import type { Token } from '../token.ts';
-import { type Abbreviation, NAMES } from '../vocabulary.ts';
+import { type Abbreviation, type Naming, NAMES } from '../vocabulary.ts';
 import type { NameItem, Recognised } from './item.ts';
 
 /**
@@ -19,6 +19,8 @@ export function readName(
   definitions: Definitions,
 ): Recognised<NameItem> | undefined {
   const token = tokens[at] as Token;
+  const logged = loggedRatio(text, tokens, at, definitions);
+  if (logged !== undefined) return logged;
   if (isGreekLetter(token.word) && !isCoefficient(tokens, at)) return undefined;
   const phrase = findPhrase(NAMES, tokens, at);
   if (phrase !== undefined && isRatioWord(tokens[phrase.end])) return namedRatio(tokens, at, phrase.end);
@@ -30,6 +32,26 @@ export function readName(
   if (short !== undefined) return named(short, tokens, at, at + 1);
   if (phrase === undefined || token.word.length < 3) return undefined;
   return named({ naming: phrase.meaning }, tokens, at, phrase.end);
+}
+
+const LOGARITHMS = new Set(['log', 'ln', 'loge', 'logarithm']);
+
+const COEFFICIENT: Naming = { quantity: { kind: 'coefficient' }, firm: true };
+
+// log OR   ln(HR)   log odds ratio: values on the log scale, which are no ratios
+function loggedRatio(
+  text: string,
+  tokens: readonly Token[],
+  at: number,
+  definitions: Definitions,
+): Recognised<NameItem> | undefined {
+  if (!LOGARITHMS.has((tokens[at] as Token).word)) return undefined;
+  const next = tokens[at + 1]?.kind === 'open' || tokens[at + 1]?.kind === 'dash' ? at + 2 : at + 1;
+  if (tokens[next]?.kind !== 'word') return undefined;
+  const name = readName(text, tokens, next, definitions);
+  if (name?.item.naming.quantity.kind !== 'ratio') return undefined;
+  const end = tokens[at + 1]?.kind === 'open' && tokens[name.end]?.kind === 'close' ? name.end + 1 : name.end;
+  return named({ naming: COEFFICIENT }, tokens, at, end);
 }
 
 function isGreekLetter(word: string): boolean {

@@ -127,10 +127,11 @@ function measuredNaming(passage: Passage, draft: Draft): Naming | undefined {
   return percent ? PERCENTAGE : AN_AMOUNT;
 }
 
-// 14.6 months (95% CI   33.2 [29.5-38.0] months   33.2 [95% CI 29.5-38.0] vs 29.5 [22.4-33.1] months
-//      ^^^^^^                            ^^^^^^                                               ^^^^^^
+// 14.6 months (95% CI   0.3/100 pyrs (95% CI   33.2 [29.5-38.0] months   33.2 [95% CI 29.5-38.0] vs 29.5 [22.4-33.1] months
+//      ^^^^^^           ^^^^^^^^                      ^^^^^^                                               ^^^^^^
 function hasUnit(items: readonly Item[], { anchor, end, label }: Draft): boolean {
   if (isUnitWord(items[anchor + 1]) || isUnitWord(afterBracket(items, end))) return true;
+  if (items[anchor + 1]?.kind === 'slash') return true;
   if (label !== undefined && isLoneWord(items, anchor + 1)) return true;
   const versus = items[end]?.kind === 'close' ? items[end + 1] : undefined;
   if (versus?.kind !== 'word' || (versus.word !== 'vs' && versus.word !== 'versus')) return false;

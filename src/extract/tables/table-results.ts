@@ -55,7 +55,7 @@ function sheetOf(table: Table, context: TableContext): Sheet {
   const { text, definitions, style, marks } = context;
   const grid = gridOf(text, table);
   const read = (span: { start: number; end: number }): readonly Item[] =>
-    readItems(text, lex(text, span, style, marks), definitions);
+    readItems(text, lex(text, span, { ...style, cell: true }, marks), definitions);
   const cache = new Map<Cell, readonly Item[]>();
   const itemsOf = (cell: Cell): readonly Item[] => {
     const known = cache.get(cell) ?? read(cell.span);
@@ -100,8 +100,8 @@ function isSaid(heading: Heading): boolean {
 }
 
 /**
- * A row in the body that names quantities and holds no numbers heads what is below
- * it, as in a second panel. Says whether the row is one.
+ * Cells in the body that name quantities head what is below them, as in a second
+ * panel. Says whether the row holds nothing else.
  */
 function replaceHeadings({ grid, itemsOf }: Sheet, row: number, inForce: Heading[]): boolean {
   if (grid.isHeaderRow(row)) return true;
@@ -112,19 +112,22 @@ function replaceHeadings({ grid, itemsOf }: Sheet, row: number, inForce: Heading
     if (names && heading.label !== undefined) inForce.fill(heading);
     return true;
   }
-  const replaced = new Map<number, Heading>();
+  let [hasHeading, hasNumber] = [false, false];
   for (let column = 1; column < grid.table.columnCount; column++) {
     const cell = grid.at(row, column);
     if (cell === undefined || cell.row !== row || cell === grid.at(row, 0)) continue;
     const items = itemsOf(cell);
-    if (items.some(({ kind }) => kind === 'number' || kind === 'p')) return false;
+    if (items.some(({ kind }) => kind === 'number' || kind === 'p')) {
+      hasNumber = true;
+      continue;
+    }
     const heading = headingOf(items);
     if (heading.names.some(({ firm }) => firm) || heading.label !== undefined || heading.p !== undefined) {
-      replaced.set(column, heading);
+      inForce[column] = heading;
+      hasHeading = true;
     }
   }
-  for (const [column, heading] of replaced) inForce[column] = heading;
-  return replaced.size > 0;
+  return hasHeading && !hasNumber;
 }
 
 /** A value with the cell and the column it stands in. */
@@ -298,17 +301,19 @@ function namingOf(
   const heading = inForce[column];
   if (heading?.p !== undefined && value.limits === undefined) return undefined;
   const over = nameFor(heading, entry);
-  if (value.limits === undefined) return isBareRatio(sheet, entry, over) ? over : undefined;
+  if (value.limits === undefined) {
+    return isBareRatio(sheet, entry, over) && !isOfTheModel(sheet, entry) ? over : undefined;
+  }
   if (value.estimate === undefined) return undefined;
-  if (isConstant(sheet, entry)) return AN_AMOUNT;
+  if (isOfTheModel(sheet, entry)) return AN_AMOUNT;
   if (over !== undefined) return over;
   if (heading?.plain) return AN_AMOUNT;
   const beside = nameFor(margin, entry);
   if (beside !== undefined) return beside;
   if (margin.spread) return AN_AMOUNT;
   const { caption, notes, context } = sheet;
-  const inherited = nameFor(caption, entry)
-    ?? (caption.spread || saysOther(caption) ? AN_AMOUNT : nameFor(notes, entry));
+  const isOther = caption.spread || saysOther(caption) || (notes.spread && heading?.label === undefined);
+  const inherited = nameFor(caption, entry) ?? (isOther ? AN_AMOUNT : nameFor(notes, entry));
   if (inherited !== undefined) return inherited;
   if (!fitsNumbers(A_RATIO, value)) return AN_AMOUNT;
   const announced = heading?.label ?? caption.label ?? notes.label;
@@ -316,9 +321,11 @@ function namingOf(
   return sheet.hasNegative() ? AN_AMOUNT : (context.customs.naming ?? AN_AMOUNT);
 }
 
-/** The intercept of a model is no ratio of anything. */
-function isConstant({ grid }: Sheet, { cell }: Placed): boolean {
-  return /^\(?(constant|intercept)(?!\p{L})/iu.test(grid.words(cell.row, 0));
+/** Rows that tell of the model as a whole; its intercept is no ratio of anything either. */
+const OF_THE_MODEL = /^\(?(constant|intercept|hosmer|correctly|observations?|nagelkerke|cox (&|and) snell|pseudo|r2|aic|bic|log[- ]likelihood|model fit|chi|wald|likelihood ratio)(?!\p{L})/iu;
+
+function isOfTheModel({ grid }: Sheet, { cell }: Placed): boolean {
+  return OF_THE_MODEL.test(grid.words(cell.row, 0));
 }
 
 /** Whether a caption speaks of shares, rates or means, if only loosely. */
@@ -428,5 +435,6 @@ function pIn(
   const before = items[at - 1];
   const relation = (before?.kind === 'relation' ? before.relation : undefined) ?? '=';
   const { printed } = number;
+  if (printed.value > 1 && relation === '=') return undefined;
   return { relation, printed, tests, span: before === undefined ? printed.span : cover(before.span, printed.span) };
 }

@@ -1,4 +1,4 @@
-import { quote } from '../model/index.ts';
+import { lex } from './lex.ts';
 import { findPhrase } from './phrases.ts';
 import type { Token } from './token.ts';
 import { ABBREVIATIONS, type Abbreviation, type Naming, NAMES } from './vocabulary.ts';
@@ -22,35 +22,39 @@ export function abbreviated(definitions: Definitions, printed: string): Abbrevia
  *                   ^^                ^^                         ^^^                ^^
  * ```
  */
-export function findDefinitions(text: string, blocks: readonly (readonly Token[])[]): Definitions {
+export function findDefinitions(text: string): Definitions {
   const definitions = new Map<string, Abbreviation | undefined>();
-  for (const tokens of blocks) {
-    for (let at = 1; at + 1 < tokens.length; at++) {
-      const token = tokens[at] as Token;
-      if (token.kind !== 'word' || tokens[at - 1]?.kind !== 'open') continue;
-      const closes = tokens[at + 1]?.kind;
-      if (closes === 'close' || closes === 'comma' || closes === 'semicolon') {
-        define(definitions, text, tokens, at);
-      }
-    }
+  for (const found of text.matchAll(BRACKETED)) {
+    const printed = found[1] as string;
+    const start = Math.max(0, found.index - LONGEST_NAME);
+    if (!ABBREVIATIONS.has(printed) && !RATIO_WORDS.test(text.slice(start, found.index))) continue;
+    define(definitions, printed, lex(text, { start, end: found.index }));
   }
   return definitions;
 }
 
+// odds ratio (OR)   heart rate [HR]   rate ratio (RR; 95% CI …)
+//            ^^^               ^^^               ^^^
+const BRACKETED = /[([]([A-Za-z]{0,5}[A-Z][A-Za-z]{0,5})(?=[)\],;])/g;
+
+const RATIO_WORDS = /ratio|odds|hazard|relative|difference|area|index/i;
+
+/** No name of a quantity is longer, in characters. */
+const LONGEST_NAME = 90;
+
+/** Takes note of what the words right before an abbreviation in brackets make it mean. */
 function define(
   definitions: Map<string, Abbreviation | undefined>,
-  text: string,
-  tokens: readonly Token[],
-  at: number,
+  printed: string,
+  before: readonly Token[],
 ): void {
-  const printed = quote(text, (tokens[at] as Token).span);
-  if (printed.length < 2 || printed.length > 6 || !/^[A-Za-z]*[A-Z]/.test(printed)) return;
-  const naming = nameBefore(tokens, at - 1);
+  if (printed.length < 2) return;
+  const naming = nameBefore(before, before.length);
   if (naming !== undefined) {
     const known = ABBREVIATIONS.get(printed)?.adjusted;
     definitions.set(printed, known === undefined ? { naming } : { naming, adjusted: known });
   } else if (ABBREVIATIONS.has(printed) && !definitions.has(printed)) {
-    if (spellsOut(tokens, at - 1, printed)) definitions.set(printed, undefined);
+    if (spellsOut(before, before.length, printed)) definitions.set(printed, undefined);
   }
 }
 

@@ -13,6 +13,7 @@ import { findStatistics } from './parse/statistics.ts';
 import { type Passage, passageOf } from './parse/passage.ts';
 import { customsOf } from './resolve/customs.ts';
 import { prevalencesIn } from './prevalences.ts';
+import { promiseOf, type Promised } from './promise.ts';
 import { type Customs, resolveResults, resolveStatistics } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
 import { resultsInTable } from './tables/table-results.ts';
@@ -28,16 +29,17 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
   const split = await loadSentenceSplitter();
   const { text, marks } = manuscript;
   const style = numberStyleOf(text);
-  const blocks = manuscript.blocks.filter(isProse);
-  const tokens = blocks.map(({ span }) => lex(text, span, style, marks));
-  const definitions = findDefinitions(text, tokens);
-  const passages = blocks.map(({ span }, index) =>
-    passageOf(readItems(text, tokens[index] ?? [], definitions), split(text, span)),
-  );
-  const customs = customsOf(passages);
-  const found = passages.map((passage, index) =>
-    findingsOf(text, passage, tokens[index] ?? [], customs),
-  );
+  const definitions = findDefinitions(text);
+  const prose = manuscript.blocks.filter(isProse).flatMap(({ span }): readonly Prose[] => {
+    const promised = promiseOf(text, span);
+    if (promised === 'nothing') return [];
+    const tokens = lex(text, span, style, marks);
+    const items = readItems(text, tokens, definitions);
+    const sentences = promised === 'results' ? split(text, span) : [span];
+    return [{ promised, tokens, passage: passageOf(items, sentences) }];
+  });
+  const customs = customsOf(prose.map(({ passage }) => passage));
+  const found = prose.map((block) => findingsOf(text, block, customs));
   const context = { text, style, marks, definitions, customs };
   const tabled = manuscript.tables.flatMap((table) => resultsInTable(table, context));
   return {
@@ -48,16 +50,35 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
   };
 }
 
+/** A block of prose made ready for reading. */
+interface Prose {
+  readonly promised: Promised;
+  readonly tokens: readonly Token[];
+  readonly passage: Passage;
+}
+
 function inOrder(results: readonly Result[]): readonly Result[] {
   return results.toSorted((a, b) => a.span.start - b.span.start);
 }
 
-function findingsOf(
+function findingsOf(text: string, { promised, tokens, passage }: Prose, customs: Customs): Findings {
+  const { results, claims } = promised === 'results'
+    ? resultsAndClaims(text, passage, tokens, customs)
+    : { results: [], claims: [] };
+  return {
+    results,
+    claims,
+    counts: findCounts(text, passage.items),
+    prevalences: prevalencesIn(text, tokens),
+  };
+}
+
+function resultsAndClaims(
   text: string,
   passage: Passage,
   tokens: readonly Token[],
   customs: Customs,
-): Findings {
+): Pick<Findings, 'results' | 'claims'> {
   const intervals = findIntervals(passage);
   const bare = findBareRatios(passage, intervals);
   const drafts = [...intervals, ...bare].sort((a, b) => a.anchor - b.anchor);
@@ -72,8 +93,6 @@ function findingsOf(
   return {
     results,
     claims: findClaims(reaches.map((reach, index) => ({ ...reach, result: results[index] ?? reach.result }))),
-    counts: findCounts(text, passage.items),
-    prevalences: prevalencesIn(text, tokens),
   };
 }
 

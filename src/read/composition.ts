@@ -80,22 +80,32 @@ export function breakLine(composition: Composition): void {
   open.spaceDue = false;
 }
 
+/** Parts a cell from the one before by a tab, which keeps their numbers apart. */
+export function separateCells(composition: Composition): void {
+  if (composition.open === undefined) return;
+  append(composition, '\t');
+  composition.open.spaceDue = false;
+}
+
+/** The text that was written since a place. */
+export function textSince({ parts, length }: Composition, start: number): string {
+  const words: string[] = [];
+  let from = length;
+  for (let at = parts.length - 1; at >= 0 && from > start; at--) {
+    const part = parts[at] as string;
+    words.unshift(part);
+    from -= part.length;
+  }
+  return words.join('');
+}
+
 /** Records that what was written since `start` is raised or lowered. */
 export function markSince(composition: Composition, kind: Mark['kind'], start: number): void {
-  const from = start + (composition.parts.at(-1) === undefined ? 0 : leadingSpace(composition, start));
+  const isParted = textSince(composition, start).startsWith(' ');
+  const from = isParted ? start + 1 : start;
   if (composition.length > from) {
     composition.marks.push({ kind, span: { start: from, end: composition.length } });
   }
-}
-
-/** A space that was due before a raised mark is no part of it. */
-function leadingSpace({ parts, length }: Composition, start: number): number {
-  let from = length;
-  for (let at = parts.length - 1; at >= 0 && from > start; at--) {
-    from -= (parts[at] as string).length;
-    if (from === start) return parts[at] === ' ' ? 1 : 0;
-  }
-  return 0;
 }
 
 /** Puts a table's cells, written row by row, into their grid. */

@@ -1,8 +1,21 @@
 import type { Printed, Range, Relation } from '../model/index.ts';
-import { absence, type Maybe } from './absence.ts';
+import { absence, type Absence, type Maybe } from './absence.ts';
 
 /** What of a printed number matters for arithmetic: its value and its last decimal place. */
 export type PrintedValue = Pick<Printed, 'value' | 'decimals'>;
+
+/** Whether these can be the value and last place of a printed number: not NaN, whole decimals. */
+export function isPrintedValue({ value, decimals }: PrintedValue): boolean {
+  return !Number.isNaN(value) && Number.isInteger(decimals) && Math.abs(decimals) <= 400;
+}
+
+/** Refuses what is no printed number, by the names a reader knows them by. */
+export function refuseUnprinted(
+  numbers: Readonly<Record<string, PrintedValue>>,
+): Absence | undefined {
+  const misfit = Object.entries(numbers).find(([, printed]) => !isPrintedValue(printed));
+  return misfit && absence(`the ${misfit[0]} is not a number`);
+}
 
 /**
  * How the digits on the page came about. Rounding to nearest is what nearly all
@@ -70,6 +83,8 @@ export function probabilitiesBehind(
   printed: PrintedValue,
   rounding: Rounding = 'to nearest',
 ): Maybe<Range> {
+  const refusal = refuseUnprinted({ 'p-value': printed });
+  if (refusal) return refusal;
   const { low, high } = relatedValues(relation, printed, rounding);
   if (!(low <= 1 && high >= 0)) return absence(`${printed.value} is not a probability`);
   return { low: Math.max(0, low), high: Math.min(1, high) };

@@ -19,6 +19,7 @@ import {
   type Printed,
   rangeInWords,
   type RatioResult,
+  sharesLeanOfTable,
   unrounded,
   type Verdict,
 } from '../src/authoring.ts';
@@ -67,6 +68,7 @@ export default defineRule({
         return cannotTell(found.because);
       case 'neither': {
         if (contrast === 'binary' && leansLittle(estimate, interval)) return agrees;
+        if (sharesLeanOfTable(reading, result)) return cannotTell(LOPSIDED_TABLE);
         const named = otherIntervalNamed(reading, result);
         return named === undefined
           ? disagreesOn(result, estimate, interval, contrast)
@@ -112,6 +114,9 @@ export default defineRule({
     },
   ],
 });
+
+const LOPSIDED_TABLE = 'most intervals of this table are not symmetric on the log scale, so that they '
+  + 'were probably made by another method';
 
 /** Whether both limits have a logarithm: neither is open nor may be zero. */
 function hasTwoLimits({ lower, upper }: Interval): boolean {

@@ -8,6 +8,7 @@ export * from './authoring/define-rule.ts';
 export * from './authoring/explaining.ts';
 export * from './authoring/listening.ts';
 export * from './authoring/printed-numbers.ts';
+export * from './authoring/table-view.ts';
 export * from './authoring/verdicts.ts';
 export * from './authoring/wording.ts';
 export type {

@@ -9,6 +9,7 @@ import type {
   Unjudged,
 } from '../model/index.ts';
 import { flagOf } from './flag-of.ts';
+import { pooled } from './pool.ts';
 
 /** A judgement, and the rule that gave it. */
 interface Given {
@@ -33,7 +34,7 @@ export function check(
     return flag === undefined ? [] : [flag];
   });
   return {
-    flags: flags.sort(bySurenessThenPlace),
+    flags: pooled(flags.sort(bySurenessThenPlace)),
     unjudged: given.flatMap(unjudgedOf).sort(byPlace),
     agreed: given.filter(({ judgement }) => judgement.verdict.outcome === 'agrees').length,
   };

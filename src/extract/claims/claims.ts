@@ -1,7 +1,9 @@
 import type { Claim } from '../../model/index.ts';
 import { directionIn, type SaidOfDirection } from './direction.ts';
-import { firstClause, hasTurn, lastClause, type Reach } from './reach.ts';
-import { type SaidOfSignificance, significanceIn } from './significance.ts';
+import type { Token } from '../token.ts';
+import { firstClause, hasTurn, hasVerb, saidBefore } from './clauses.ts';
+import type { Reach } from './reach.ts';
+import { elliptic, type SaidOfSignificance, significanceIn } from './significance.ts';
 import { scaleIn, sizeIn } from './size.ts';
 
 /**
@@ -11,7 +13,7 @@ import { scaleIn, sizeIn } from './size.ts';
 export function findClaims(reaches: readonly Reach[]): readonly Claim[] {
   return bySentence(reaches).flatMap((sentence) => {
     const significance = throughList(sentence, significanceOf, significanceBehind);
-    const direction = throughList(sentence, directionOf, directionBehind);
+    const direction = throughList(withListWords(sentence), directionOf, directionBehind);
     return sentence.flatMap((reach, index) => claimsOf(reach, significance[index], direction[index]));
   });
 }
@@ -51,9 +53,25 @@ function throughList<Said>(
   return answers;
 }
 
+/**
+ * The results of a sentence, those without a verb of their own with the words of
+ * those before them: a list says once which way all of it points.
+ */
+function withListWords(sentence: readonly Reach[]): readonly Reach[] {
+  let words: readonly Token[] = [];
+  return sentence.map((reach) => {
+    const goesOn = reach.follows && !hasVerb(reach.before) && !hasTurn(reach.before);
+    words = goesOn ? [...words, ...reach.before].slice(-LONGEST_LIST) : reach.before;
+    return { ...reach, before: words };
+  });
+}
+
+/** The words of a list are followed back so far and no further, in tokens. */
+const LONGEST_LIST = 200;
+
 /** Words behind a result outweigh those before it only where they state significance. */
 function significanceOf({ before, behind }: Reach): SaidOfSignificance | undefined {
-  const own = significanceIn(lastClause(before));
+  const own = saidBefore(before, (clause, turned) => significanceIn(clause) ?? elliptic(clause, turned));
   const after = significanceIn(firstClause(behind));
   return after?.manner === 'stated' && own?.manner !== 'stated' ? after : own;
 }
@@ -61,7 +79,7 @@ function significanceOf({ before, behind }: Reach): SaidOfSignificance | undefin
 const significanceBehind = ({ behind }: Reach) => significanceIn(firstClause(behind));
 
 const directionOf = ({ before, result }: Reach): SaidOfDirection | undefined =>
-  directionIn(lastClause(before), result);
+  saidBefore(before, (clause) => directionIn(clause, result));
 
 const directionBehind = ({ behind, result }: Reach) => directionIn(firstClause(behind), result);
 
@@ -71,9 +89,8 @@ function claimsOf(
   direction: SaidOfDirection | undefined,
 ): readonly Claim[] {
   const common = { sentence, of: result };
-  const clause = lastClause(before);
-  const size = sizeIn(clause) ?? sizeIn(firstClause(behind));
-  const scale = scaleIn(clause);
+  const size = saidBefore(before, sizeIn) ?? sizeIn(firstClause(behind));
+  const scale = saidBefore(before, scaleIn);
   const claims: Claim[] = [];
   if (significance !== undefined) claims.push({ kind: 'significance', ...common, ...significance });
   if (direction !== undefined) claims.push({ kind: 'direction', ...common, ...direction });

@@ -52,7 +52,7 @@ function reachOf(
     sentence: sentenceSpans[sentence] ?? result.span,
     follows: previous !== undefined,
     before: previous === undefined ? leading : leading.slice(afterthought(leading)),
-    behind: next === undefined ? trailing : trailing.slice(0, afterthought(trailing)),
+    behind: next === undefined ? trailing : trailing.slice(0, predicate(trailing) || afterthought(trailing)),
   };
 }
 
@@ -76,6 +76,28 @@ function afterthought(words: readonly Token[]): number {
   const join = words.findIndex(({ word }) => JOINS.has(word));
   if (join < 0) return 0;
   return words.slice(join).some(({ word }) => VERBS.has(word)) ? join : 0;
+}
+
+const MULTIPLIERS = new Set(['times', 'fold']);
+
+/**
+ * How many of the words between two results go on with the first: a verb right
+ * behind it, or "times", and what belongs to that.
+ *
+ * ```
+ * dust (OR 2.1 …) was associated with cough, as was salt     had 2.0 (1.7–2.4) times the risk, and
+ *                 ^^^^^^^^^^^^^^^^^^^^^^^^^^                                    ^^^^^^^^^^^^^^
+ * ```
+ */
+function predicate(words: readonly Token[]): number {
+  const first = words.findIndex(({ kind }) => kind === 'word');
+  const closed = words.findLastIndex(({ kind }, at) => kind === 'close' && at < 14);
+  const start = Math.max(first, words.findIndex(({ kind }, at) => kind === 'word' && at > closed));
+  const { word } = words[start] ?? { word: '' };
+  if (!VERBS.has(word) && !MULTIPLIERS.has(word)) return 0;
+  const end = words.findIndex(({ kind, word: joint }, at) => at > start
+    && (kind === 'comma' || kind === 'semicolon' || kind === 'open' || JOINS.has(joint)));
+  return Math.max(0, end);
 }
 
 /** Where the estimate and interval stand; words may come between them and the p-value. */
@@ -104,30 +126,4 @@ function tokensInSentences(passage: Passage, tokens: readonly Token[]): readonly
     sentences[sentence]?.push(token);
   }
   return sentences;
-}
-
-const TURNS = new Set(['but', 'whereas', 'while', 'although', 'though', 'however', 'yet', 'except']);
-
-/**
- * The clause nearest to the result: what stands behind the last word that turns
- * the sentence, or behind a semicolon.
- */
-export function lastClause(tokens: readonly Token[]): readonly Token[] {
-  for (let at = tokens.length - 1; at >= 0; at--) {
-    const token = tokens[at] as Token;
-    if (token.kind === 'semicolon' || TURNS.has(token.word)) return tokens.slice(at + 1);
-  }
-  return tokens;
-}
-
-/** The clause that follows a result: up to a semicolon or a new subject. */
-export function firstClause(tokens: readonly Token[]): readonly Token[] {
-  const end = tokens.findIndex(({ kind, word }) => kind === 'semicolon'
-    || (TURNS.has(word) && word !== 'but') || word === 'and');
-  return end < 0 ? tokens : tokens.slice(0, end);
-}
-
-/** Whether the sentence turns on the way to a result, so that lists end there. */
-export function hasTurn(tokens: readonly Token[]): boolean {
-  return tokens.some(({ word }) => TURNS.has(word));
 }

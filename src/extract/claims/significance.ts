@@ -1,5 +1,9 @@
 import { cover, type SignificanceClaim, type Span } from '../../model/index.ts';
 import type { Token } from '../token.ts';
+import { isOfAmount } from './amounts.ts';
+import { hasVerb } from './clauses.ts';
+import { sizeIn } from './size.ts';
+import { isNegated, NEGATIONS, wordsBefore } from './negation.ts';
 
 /** What a clause says of significance, with the words that say it. */
 export interface SaidOfSignificance {
@@ -7,9 +11,6 @@ export interface SaidOfSignificance {
   readonly manner: SignificanceClaim['manner'];
   readonly span: Span;
 }
-
-const NEGATIONS = new Set(['no', 'not', 'nonstatistically', 'neither', 'nor', 'without', 'never', 'lacked', 'lack',
-  'cannot', 'failed', 'none', "didn't", "wasn't", "weren't", 'absence', 'loses', 'lost', 'fails']);
 
 const SIGNIFICANT = new Set(['significant', 'significantly', 'significance']);
 
@@ -22,7 +23,10 @@ const INSIGNIFICANT = new Set(['insignificant', 'insignificantly', 'nonsignifica
 const ASSOCIATION = new Set(('association associations associated relationship relation related '
   + 'difference differences differ differed effect effects impact influence influenced correlation '
   + 'correlated evidence increase increased increases change changed benefit improve improved reduce '
-  + 'reduced reduces predict predicted predictive predictor predictors affect affected linked link observed seen').split(' '));
+  + 'reduced reduces predict predicted predictive predictor predictors affect affected linked link trend').split(' '));
+
+/** Verbs behind a subject that says what was found: "no effect of tar on cough was observed". */
+const OBSERVED = new Set(['observed', 'seen', 'found', 'detected', 'noted', 'evident']);
 
 const SAMENESS = new Set(['unrelated', 'unaffected', 'unchanged', 'similar', 'comparable']);
 
@@ -31,7 +35,8 @@ const IMPLYING = new Set(('associated association associations predict predicted
   + 'reduction reduces reduce higher lower greater improved improves improvement longer shorter protective '
   + 'elevated related correlated worse better likelier favored favoured favoring favouring superior '
   + 'prolonged likely doubled halved protected raised determinants determinant linked independent independently factors more less '
-  + 'reductions effective advantage durable favorable favourable').split(' '));
+  + 'reductions effective advantage durable favorable favourable inverse inversely positively negatively '
+  + 'adversely reducing factor twofold threefold doubling preventive').split(' '));
 
 /**
  * What the words of a clause say of significance, the nearest to the end first.
@@ -43,7 +48,7 @@ const IMPLYING = new Set(('associated association associations predict predicted
  * ```
  */
 export function significanceIn(tokens: readonly Token[]): SaidOfSignificance | undefined {
-  return stated(tokens) ?? denied(tokens) ?? implied(tokens);
+  return stated(tokens) ?? denied(tokens) ?? implied(tokens) ?? bySize(tokens);
 }
 
 function stated(tokens: readonly Token[]): SaidOfSignificance | undefined {
@@ -85,12 +90,12 @@ function denied(tokens: readonly Token[]): SaidOfSignificance | undefined {
   for (let at = tokens.length - 1; at >= 0; at--) {
     const token = tokens[at] as Token;
     if (isSame(tokens, at)) return said(false, 'no association', token.span);
-    if (!ASSOCIATION.has(token.word)) continue;
+    if (!ASSOCIATION.has(token.word) && !OBSERVED.has(token.word)) continue;
     const negation = wordsBefore(tokens, at, 4).find(({ word }) => NEGATIONS.has(word));
     if (negation !== undefined && !isOfOther(tokens, at)) {
       return said(false, 'no association', cover(negation.span, token.span));
     }
-    return undefined;
+    if (!OBSERVED.has(token.word)) return undefined;
   }
   return undefined;
 }
@@ -112,11 +117,41 @@ function isOfOther(tokens: readonly Token[], at: number): boolean {
 function implied(tokens: readonly Token[]): SaidOfSignificance | undefined {
   for (let at = tokens.length - 1; at >= 0; at--) {
     const token = tokens[at] as Token;
-    if (!IMPLYING.has(token.word)) continue;
-    const isNegated = wordsBefore(tokens, at, 4).some(({ word }) => NEGATIONS.has(word));
-    return isNegated ? undefined : said(true, 'implied', token.span);
+    if (!IMPLYING.has(token.word) || isOfAmount(tokens, at) || isOfMeasure(tokens, at)) continue;
+    return isNegated(tokens, at) ? undefined : said(true, 'implied', token.span);
   }
   return undefined;
+}
+
+// twice the odds   1.6 times as likely
+function bySize(tokens: readonly Token[]): SaidOfSignificance | undefined {
+  const size = sizeIn(tokens);
+  return size === undefined || size.factor === 1 ? undefined : said(true, 'implied', size.span);
+}
+
+const MEASURES = new Set(['ratio', 'ratios', 'rr', 'or', 'hr', 'ors', 'hrs', 'rrs', 'irr', 'risk', 'rate']);
+
+// the risk ratio associated with brevane was   age-related   two risk factors
+function isOfMeasure(tokens: readonly Token[], at: number): boolean {
+  const { word } = tokens[at] as Token;
+  const before = tokens[at - 1];
+  if (word === 'factor' || word === 'factors') return before?.word !== 'risk' && before?.word !== 'protective';
+  if (word === 'related') return before?.kind === 'dash' && !before.spaced;
+  return word === 'associated' && MEASURES.has(before?.word ?? '');
+}
+
+/**
+ * A clause that only denies, of its own result, what was said of another.
+ *
+ * ```
+ * was associated with asthma (OR 2.5 …), but not with cough (OR 0.9 …)
+ *                                            ^^^
+ * ```
+ */
+export function elliptic(tokens: readonly Token[], turned: boolean): SaidOfSignificance | undefined {
+  const [first] = tokens;
+  const denies = first?.word === 'not' || first?.word === 'neither';
+  return turned && denies && !hasVerb(tokens) ? said(false, 'implied', first.span) : undefined;
 }
 
 function said(
@@ -125,15 +160,4 @@ function said(
   span: Span,
 ): SaidOfSignificance {
   return { asserted, manner, span };
-}
-
-/** The words that stand before, up to so many, not over a comma or a bracket's end. */
-function wordsBefore(tokens: readonly Token[], at: number, count: number): readonly Token[] {
-  const words: Token[] = [];
-  for (let index = at - 1; index >= 0 && words.length < count; index--) {
-    const token = tokens[index] as Token;
-    if (token.kind === 'comma' || token.kind === 'close' || token.kind === 'semicolon') break;
-    if (token.kind === 'word') words.push(token);
-  }
-  return words;
 }

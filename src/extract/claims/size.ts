@@ -8,15 +8,28 @@ export interface SaidOfSize {
   readonly span: Span;
 }
 
+/** Words that tell a factor by themselves. */
 const FACTORS: Readonly<Record<string, number>> = {
-  twice: 2, doubled: 2, doubling: 2, doubles: 2, double: 2, tripled: 3, thrice: 3, halved: 0.5,
-  quadrupled: 4, twofold: 2, threefold: 3, fourfold: 4, fivefold: 5, tenfold: 10, halving: 0.5,
+  doubled: 2, doubling: 2, doubles: 2, tripled: 3, tripling: 3, trebled: 3, halved: 0.5, halving: 0.5,
+  halves: 0.5, quadrupled: 4, twofold: 2, threefold: 3, fourfold: 4, fivefold: 5, sixfold: 6, tenfold: 10,
+};
+
+/** Words that tell a factor only before a quantity: "twice the odds", but not "twice daily". */
+const MULTIPLES: Readonly<Record<string, number>> = { twice: 2, thrice: 3, double: 2, triple: 3, half: 0.5 };
+
+const NUMBERS: Readonly<Record<string, number>> = {
+  two: 2, three: 3, four: 4, five: 5, six: 6, seven: 7, eight: 8, nine: 9, ten: 10,
 };
 
 const RISE = new Set(['increase', 'increased', 'higher', 'greater', 'more', 'elevated', 'rise', 'excess',
-  'increases', 'elevation']);
+  'increases', 'elevation', 'increasing', 'raised', 'raising', 'rose', 'raises']);
 const FALL = new Set(['reduction', 'reduced', 'lower', 'decrease', 'decreased', 'less', 'fewer', 'decline',
-  'reduces', 'reductions', 'decreases', 'drop']);
+  'reduces', 'reductions', 'decreases', 'drop', 'reducing', 'reduce', 'lowered', 'lowering', 'decreasing',
+  'fell', 'declined', 'lowers']);
+
+/** Words that may stand between a percentage and the change it is of. */
+const BETWEEN = new Set(['relative', 'significant', 'risk', 'odds', 'hazard', 'rate', 'statistically',
+  'significantly', 'adjusted', 'independent']);
 
 /**
  * The size that a clause speaks of, the nearest to its end.
@@ -28,41 +41,100 @@ const FALL = new Set(['reduction', 'reduced', 'lower', 'decrease', 'decreased', 
  */
 export function sizeIn(tokens: readonly Token[]): SaidOfSize | undefined {
   for (let at = tokens.length - 1; at >= 0; at--) {
-    const token = tokens[at] as Token;
-    const factor = FACTORS[token.word];
-    if (factor !== undefined && Object.hasOwn(FACTORS, token.word)) return { factor, span: token.span };
-    const size = token.printed === undefined ? undefined : sizeAt(tokens, at, token.printed);
+    const { word, span, printed } = tokens[at] as Token;
+    if (Object.hasOwn(FACTORS, word)) return { factor: FACTORS[word] as number, span };
+    if (Object.hasOwn(MULTIPLES, word) && multiplies(tokens, at)) {
+      return { factor: MULTIPLES[word] as number, span };
+    }
+    const size = printed === undefined ? inWords(tokens, at) : sizeAt(tokens, at, printed);
     if (size !== undefined) return size;
   }
   return undefined;
 }
 
+// twice as likely   double the odds   half the risk   but not: twice daily   half of the women
+function multiplies(tokens: readonly Token[], at: number): boolean {
+  const [next, quantity] = [tokens[at + 1]?.word ?? '', tokens[at + 2]?.word ?? ''];
+  if (next === 'as' || Object.hasOwn(SCALES, next)) return true;
+  return (next === 'the' || next === 'their') && tokens.slice(at + 2, at + 5).some(({ word }) =>
+    Object.hasOwn(SCALES, word)) && quantity !== 'patients';
+}
+
+// three times as likely   two-fold
+function inWords(tokens: readonly Token[], at: number): SaidOfSize | undefined {
+  const { word, span } = tokens[at] as Token;
+  if (!Object.hasOwn(NUMBERS, word)) return undefined;
+  const after = tokens[afterDash(tokens, at)];
+  return after !== undefined && isTimes(tokens, afterDash(tokens, at))
+    ? { factor: NUMBERS[word] as number, span: cover(span, after.span) }
+    : undefined;
+}
+
+function afterDash(tokens: readonly Token[], at: number): number {
+  return tokens[at + 1]?.kind === 'dash' ? at + 2 : at + 1;
+}
+
+// 1.6 times as likely   1.6 times the odds   1.6-fold   but not: three times a week
+function isTimes(tokens: readonly Token[], at: number): boolean {
+  const word = tokens[at]?.word;
+  const next = tokens[at + 1]?.word ?? '';
+  if (word === 'fold') return true;
+  return word === 'times' && next !== 'a' && next !== 'per' && next !== 'daily' && next !== 'weekly';
+}
+
 function sizeAt(tokens: readonly Token[], at: number, printed: Printed): SaidOfSize | undefined {
-  const next = tokens[at + 1]?.kind === 'dash' ? at + 2 : at + 1;
-  const after = tokens[next];
-  const number = tokens[at] as Token;
-  if (after === undefined) return undefined;
-  const span = cover(number.span, after.span);
-  if (!printed.percent && (after.word === 'times' || after.word === 'fold')) {
+  const next = afterDash(tokens, at);
+  const [number, after] = [tokens[at] as Token, tokens[next]];
+  if (after !== undefined && !printed.percent && isTimes(tokens, next)) {
+    const span = cover(number.span, after.span);
     return printed.value > 0 ? { factor: printed.value, printed, span } : undefined;
   }
-  if (!printed.percent || printed.value <= 0) return undefined;
-  const change = RISE.has(after.word) ? 1 : FALL.has(after.word) ? -1 : changeBefore(tokens, at);
-  if (change === 0) return undefined;
-  const factor = 1 + (change * printed.value) / 100;
+  if (!printed.percent || printed.value <= 0 || isStep(tokens, at)) return undefined;
+  const change = changeBehind(tokens, next) ?? changeBefore(tokens, at);
+  if (change === undefined) return undefined;
+  const factor = 1 + (change.sign * printed.value) / 100;
+  const span = cover(number.span, (tokens[change.at] as Token).span);
   return factor > 0 ? { factor, printed, span } : undefined;
 }
 
-// increased the odds by 59%   reduced by 30%
-function changeBefore(tokens: readonly Token[], at: number): number {
-  if (tokens[at - 1]?.word !== 'by') return 0;
-  for (let index = at - 2; index >= Math.max(0, at - 8); index--) {
-    const word = (tokens[index] as Token).word;
-    if (RISE.has(word)) return 1;
-    if (FALL.has(word)) return -1;
-  }
-  return 0;
+// per 10% increase   for each 5% rise
+function isStep(tokens: readonly Token[], at: number): boolean {
+  return tokens.slice(Math.max(0, at - 3), at).some(({ word }) =>
+    word === 'per' || word === 'each' || word === 'every');
 }
+
+interface Change {
+  readonly sign: 1 | -1;
+  readonly at: number;
+}
+
+function changeAt(tokens: readonly Token[], at: number): Change | undefined {
+  const word = tokens[at]?.word ?? '';
+  if (RISE.has(word)) return { sign: 1, at };
+  return FALL.has(word) ? { sign: -1, at } : undefined;
+}
+
+// 30% lower   59% relative increase   30% risk reduction
+function changeBehind(tokens: readonly Token[], from: number): Change | undefined {
+  let at = from;
+  while (at < from + 3 && BETWEEN.has(tokens[at]?.word ?? '')) at++;
+  return changeAt(tokens, at);
+}
+
+// increased the odds by 59%   reduced by about 30%   a reduction of 30%
+function changeBefore(tokens: readonly Token[], at: number): Change | undefined {
+  const link = tokens[at - 1]?.kind === 'word' && ABOUT.has(tokens[at - 1]?.word ?? '') ? at - 2 : at - 1;
+  const word = tokens[link]?.word;
+  if (word === 'of') return changeAt(tokens, link - 1);
+  if (word !== 'by') return undefined;
+  for (let index = link - 1; index >= Math.max(0, link - 8); index--) {
+    const change = changeAt(tokens, index);
+    if (change !== undefined) return change;
+  }
+  return undefined;
+}
+
+const ABOUT = new Set(['about', 'around', 'approximately', 'some', 'nearly', 'almost']);
 
 /** The quantity that a clause speaks of, with the word that names it. */
 export interface SaidOfScale {
@@ -79,6 +151,10 @@ const SCALES: Readonly<Record<string, SpokenScale>> = {
 const NOT_A_QUANTITY = new Set(['factor', 'factors', 'score', 'scores', 'group', 'groups', 'ratio', 'ratios',
   'stratification', 'assessment', 'model', 'models', 'reduction', 'difference', 'set', 'ratings']);
 
+/** Before "risk" or "rate" these make a group, a measure or a reading of the body. */
+const NOT_OF_OUTCOMES = new Set(['at', 'high', 'low', 'relative', 'heart', 'respiratory', 'filtration', 'pulse',
+  'metabolic', 'sedimentation', 'flow', 'exchange', 'intermediate']);
+
 /**
  * Whether a clause speaks of odds, hazards, rates or risks; the names of measures
  * ("relative risk", "odds ratio") say nothing of that.
@@ -90,7 +166,7 @@ export function scaleIn(tokens: readonly Token[]): SaidOfScale | undefined {
     const before = tokens[at - 1];
     const label = before?.kind === 'dash' ? tokens[at - 2]?.word : before?.word;
     if (NOT_A_QUANTITY.has(tokens[at + 1]?.word ?? '')) continue;
-    if (label === 'at' || label === 'high' || label === 'low' || label === 'relative') continue;
+    if (NOT_OF_OUTCOMES.has(label ?? '')) continue;
     return { scale: SCALES[word] as SpokenScale, span };
   }
   return undefined;

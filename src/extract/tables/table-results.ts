@@ -106,7 +106,9 @@ function isSaid(heading: Heading): boolean {
 function replaceHeadings({ grid, itemsOf }: Sheet, row: number, inForce: Heading[]): boolean {
   if (grid.isHeaderRow(row)) return true;
   const first = grid.at(row, 0);
-  if (first !== undefined && first.columnSpan >= grid.table.columnCount - 1) {
+  const isAcross = first !== undefined && first.columnSpan > 1
+    && first.columnSpan >= grid.table.columnCount - 1;
+  if (isAcross) {
     const heading = headingOf(itemsOf(first));
     const names = heading.names.some(({ firm, quantity }) => firm && quantity.kind === 'ratio');
     if (names && heading.label !== undefined) inForce.fill(heading);

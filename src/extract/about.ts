@@ -1,4 +1,5 @@
-import { cover, quote, type Span } from '../model/index.ts';
+import { type About, cover, quote, type Span } from '../model/index.ts';
+import type { Reach } from './claims/reach.ts';
 import type { Token } from './token.ts';
 
 const QUANTITIES = new Set(['risk', 'risks', 'odds', 'hazard', 'hazards', 'ratio', 'ratios', 'or', 'hr', 'rr',
@@ -16,6 +17,27 @@ const ARTICLES = new Set(['the', 'a', 'an', 'any', 'subsequent', 'developing', '
 const LONGEST = 8;
 
 /**
+ * What a result is about, as far as its own sentence says: outcome, exposure,
+ * comparison and unit, each in the manuscript's words, each only where they are plain.
+ */
+export function aboutOf(text: string, reach: Reach): About {
+  const { before, inside, behind } = reach;
+  const outcome = outcomeIn(text, before);
+  const term = termIn(text, reach, outcome);
+  const comparison = comparisonIn(text, before) ?? comparisonIn(text, behind.slice(0, NEAR));
+  const unit = unitIn(text, inside) ?? unitIn(text, before.slice(-NEAR)) ?? unitIn(text, behind.slice(0, NEAR));
+  return {
+    ...(outcome === undefined ? {} : { outcome }),
+    ...(term === undefined ? {} : { term }),
+    ...(comparison === undefined ? {} : { comparison }),
+    ...(unit === undefined ? {} : { unit }),
+  };
+}
+
+/** Words so near to a result may give its unit or its comparison. */
+const NEAR = 8;
+
+/**
  * The outcome that a clause names, in its own words: what stands behind "risk of",
  * "odds ratio for" or "associated with".
  *
@@ -24,11 +46,11 @@ const LONGEST = 8;
  *                             ^^^^^^^^^^^^^^^^^^^^                          ^^^^^^^^^^
  * ```
  */
-export function outcomeIn(text: string, tokens: readonly Token[]): string | undefined {
+function outcomeIn(text: string, tokens: readonly Token[]): string | undefined {
   for (let at = tokens.length - 2; at >= 0; at--) {
     const start = outcomeStart(tokens, at);
     const span = start === undefined ? undefined : nounPhrase(tokens, start);
-    if (span !== undefined) return quote(text, span).replace(/\s+/g, ' ');
+    if (span !== undefined) return wordsAt(text, span);
   }
   return undefined;
 }
@@ -56,4 +78,110 @@ function continuesName(token: Token | undefined, isFirst: boolean): boolean {
   if (token === undefined) return false;
   if (token.kind === 'dash') return !isFirst;
   return token.kind === 'word' && !ENDS.has(token.word) && !QUANTITIES.has(token.word);
+}
+
+function wordsAt(text: string, span: Span): string {
+  return quote(text, span).replace(/\s+/g, ' ');
+}
+
+const INTRODUCES = new Set(['and', 'or', 'with', 'included', 'include', 'including', 'were', 'was', 'are', 'by',
+  'of', 'than', 'that', 'had', 'between', 'among', 'for', 'in', 'while', 'but', 'whereas', 'as', 'from', 'on']);
+
+const VERBS = new Set(['was', 'were', 'is', 'are', 'had', 'has', 'have', 'increased', 'reduced', 'increases',
+  'reduces', 'showed', 'resulted', 'predicted', 'remained', 'lowered', 'raised', 'doubled', 'did', 'improved']);
+
+/**
+ * The exposure: the words before a result's bracket in a list, or else the subject of
+ * its sentence.
+ *
+ * ```
+ * low education (AOR=3.80 …), parity above three (AOR=2.09 …)     Tarring was associated with
+ * ^^^^^^^^^^^^^               ^^^^^^^^^^^^^^^^^^                  ^^^^^^^
+ * ```
+ */
+function termIn(text: string, { before, follows }: Reach, outcome: string | undefined): string | undefined {
+  const open = openingBracket(before);
+  const listed = open === undefined ? undefined : phraseBefore(before, open);
+  if (listed !== undefined && (outcome === undefined || !sameWords(wordsAt(text, listed), outcome))) {
+    return wordsAt(text, listed);
+  }
+  if (follows) return undefined;
+  const verb = before.findIndex(({ word }) => VERBS.has(word));
+  const subject = verb > 0 ? nounPhrase(before.slice(0, verb), 0) : undefined;
+  const isWhole = subject !== undefined && subject.end === before[verb - 1]?.span.end;
+  return isWhole && !QUANTITIES.has(before[0]?.word ?? '') ? wordsAt(text, subject) : undefined;
+}
+
+/** The bracket that a result stands in, right behind what it is about. */
+function openingBracket(before: readonly Token[]): number | undefined {
+  for (let at = before.length - 1; at >= Math.max(0, before.length - 8); at--) {
+    const { kind } = before[at] as Token;
+    if (kind === 'open' && before[at - 1]?.kind === 'word') return at;
+    if (kind === 'close' || kind === 'stop' || kind === 'number') return undefined;
+  }
+  return undefined;
+}
+
+/** The words right before token `end`, back to where the list or the clause began. */
+function phraseBefore(tokens: readonly Token[], end: number): Span | undefined {
+  let start = end;
+  while (start > 0 && end - start < LONGEST) {
+    const { kind, word } = tokens[start - 1] as Token;
+    if ((kind !== 'word' && kind !== 'dash') || INTRODUCES.has(word)) break;
+    start--;
+  }
+  while (ARTICLES.has(tokens[start]?.word ?? '')) start++;
+  const [first, last] = [tokens[start], tokens[end - 1]];
+  return first === undefined || last === undefined || start >= end ? undefined : cover(first.span, last.span);
+}
+
+function sameWords(one: string, other: string): boolean {
+  return one.toLowerCase() === other.toLowerCase();
+}
+
+/**
+ * What a result is compared with.
+ *
+ * ```
+ * compared with people who had no tar     tarvolane versus placebo     than in women
+ *               ^^^^^^^^^^^^^^^^^^^^^^                      ^^^^^^^
+ * ```
+ */
+function comparisonIn(text: string, tokens: readonly Token[]): string | undefined {
+  for (let at = 0; at + 1 < tokens.length; at++) {
+    const [word, next] = [tokens[at]?.word ?? '', tokens[at + 1]?.word];
+    const isVersus = word === 'versus' || word === 'vs';
+    const isCompared = (word === 'compared' && (next === 'with' || next === 'to'))
+      || (word === 'relative' && next === 'to');
+    if (!isVersus && !isCompared) continue;
+    const start = isCompared ? at + 2 : tokens[at + 1]?.kind === 'stop' ? at + 2 : at + 1;
+    const span = nounPhrase(tokens, start);
+    if (span !== undefined) return wordsAt(text, span);
+  }
+  return undefined;
+}
+
+/**
+ * The unit that a ratio is per.
+ *
+ * ```
+ * per year     per 10 mm Hg increase     per SD     for each additional drink     1-SD increase
+ * ^^^^^^^^     ^^^^^^^^^^^^^^^^^^^^^     ^^^^^^     ^^^^^^^^^^^^^^^^^^^^^
+ * ```
+ */
+function unitIn(text: string, tokens: readonly Token[]): string | undefined {
+  for (let at = 0; at < tokens.length; at++) {
+    const { word } = tokens[at] as Token;
+    if (word !== 'per' && word !== 'each' && word !== 'every') continue;
+    let end = at + 1;
+    while (end < at + 7 && isUnitPart(tokens[end])) end++;
+    if (end > at + 1) return wordsAt(text, cover((tokens[at] as Token).span, (tokens[end - 1] as Token).span));
+  }
+  return undefined;
+}
+
+function isUnitPart(token: Token | undefined): boolean {
+  if (token?.kind === 'number') return true;
+  if (token?.kind === 'slash' || token?.kind === 'dash') return true;
+  return token?.kind === 'word' && !ENDS.has(token.word);
 }

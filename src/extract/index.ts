@@ -1,7 +1,7 @@
 import type { Block, Findings, Manuscript, Result } from '../model/index.ts';
-import { outcomeIn } from './about.ts';
+import { aboutOf } from './about.ts';
 import { findClaims } from './claims/claims.ts';
-import { reachesOf } from './claims/reach.ts';
+import { type Reach, reachesOf } from './claims/reach.ts';
 import { findDefinitions } from './definitions.ts';
 import { lex } from './lex.ts';
 import { numberStyleOf } from './number.ts';
@@ -89,16 +89,19 @@ function resultsAndClaims(
     ...resolveStatistics(statistics),
   ].sort((a, b) => a.span.start - b.span.start);
   const reaches = reachesOf(passage, tokens, resolved);
-  const results = reaches.map(({ result, before }) => withAbout(text, result, before));
+  const results = reaches.map((reach) => withAbout(text, reach));
   return {
     results,
     claims: findClaims(reaches.map((reach, index) => ({ ...reach, result: results[index] ?? reach.result }))),
   };
 }
 
-function withAbout(text: string, result: Result, before: readonly Token[]): Result {
-  const outcome = outcomeIn(text, before);
-  return outcome === undefined ? result : { ...result, about: { ...result.about, outcome } };
+function withAbout(text: string, reach: Reach): Result {
+  const { result } = reach;
+  const about = aboutOf(text, reach);
+  // The words nearest to a result are mostly, and not always, what it is of.
+  const inferred = about.term === undefined ? result.inferred : [...result.inferred, 'term' as const];
+  return { ...result, about, inferred };
 }
 
 const PROSE: ReadonlySet<Block['kind']> = new Set(['title', 'heading', 'paragraph', 'caption', 'note']);

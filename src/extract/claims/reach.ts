@@ -12,6 +12,8 @@ export interface Reach {
   /** Whether another result stands before it in the sentence. */
   readonly follows: boolean;
   readonly before: readonly Token[];
+  /** The words between its first number and its last. */
+  readonly inside: readonly Token[];
   readonly behind: readonly Token[];
 }
 
@@ -52,6 +54,7 @@ function reachOf(
     sentence: sentenceSpans[sentence] ?? result.span,
     follows: previous !== undefined,
     before: previous === undefined ? leading : leading.slice(afterthought(leading)),
+    inside: between(words, start, end),
     behind: next === undefined ? trailing : trailing.slice(0, predicate(trailing) || afterthought(trailing)),
   };
 }

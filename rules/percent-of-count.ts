@@ -1,6 +1,7 @@
 import {
   agrees,
   cannotTell,
+  contains,
   type Count,
   countsBehindPercent,
   defineManuscriptRule,
@@ -48,7 +49,12 @@ export default defineManuscriptRule({
       const { count, total, percent, span } = counted;
       if (count === undefined || total === undefined || percent === undefined) return [];
       const verdict = judgeShare({ count, total, percent }, around(reading, counted));
-      return [{ verdict, span, marks: spansOf([count, total, percent]) }];
+      const isOwn = contains(span, total.span);
+      return [{
+        verdict: isOwn ? verdict : asOfColumn(verdict, total),
+        span,
+        marks: spansOf(isOwn ? [count, total, percent] : [count, percent]),
+      }];
     });
   },
 
@@ -91,6 +97,16 @@ interface Share {
   readonly count: Printed;
   readonly total: Printed;
   readonly percent: Printed;
+}
+
+/** A total that heads a column counts everyone; the percentage may leave some of them out. */
+function asOfColumn(verdict: Verdict, total: Printed): Verdict {
+  if (verdict.outcome !== 'disagrees') return verdict;
+  return {
+    ...verdict,
+    grade: 'discrepancy',
+    working: [...verdict.working, `${total.plain} is the size that the column’s heading gives`],
+  };
 }
 
 function judgeShare({ count, total, percent }: Share, nearby: string): Verdict {

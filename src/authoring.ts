@@ -30,7 +30,7 @@ export type {
   Span,
   Verdict,
 } from './model/index.ts';
-export { cover, quote } from './model/index.ts';
+export { contains, cover, quote } from './model/index.ts';
 export { isAbsence } from './stats/absence.ts';
 export type { Agreement } from './stats/agreement.ts';
 export type { Contrast } from './stats/contrast.ts';

@@ -49,9 +49,8 @@ export function explanationsInWords(
   contrast: Contrast,
 ): readonly string[] {
   const numbers = reportedNumbers(estimate, interval, p);
-  const found = explanations(numbers, usualReading(numbers, 'log'), contrast)
-    .filter((explanation) => isPlausible(explanation, p !== undefined))
-    .sort((one, other) => ORDER.indexOf(one.kind) - ORDER.indexOf(other.kind));
+  const found = explanationsInOrder(explanations(numbers, usualReading(numbers, 'log'), contrast))
+    .filter((explanation) => isPlausible(explanation, p !== undefined));
   const lopsided = found.filter(({ kind }) => kind === 'asymmetric interval');
   const others = found.filter(({ kind }) => kind !== 'asymmetric interval');
   const tellsApart = witness?.tests === 'result' ? witness : undefined;
@@ -62,12 +61,25 @@ export function explanationsInWords(
   ];
 }
 
+/** Explanations as a reviewer would think of them, likeliest first, without far-fetched ones. */
+export function explanationsInOrder(found: readonly Explanation[]): readonly Explanation[] {
+  return found
+    .filter((explanation) =>
+      explanation.kind !== 't distribution' || explanation.most >= FEWEST_DEGREES)
+    .toSorted((one, other) => ORDER.indexOf(one.kind) - ORDER.indexOf(other.kind));
+}
+
 /** The slips that fit all numbers, the witness included; without it where none does. */
 function slipsIn(all: ReportedNumbers, without: ReportedNumbers): readonly string[] {
   const found = [all, without]
-    .map((numbers) => repairs(numbers, usualReading(numbers, 'log')).filter(isLikely))
-    .find((slips) => slips.length > 0 && slips.length <= TOO_MANY_SLIPS);
-  return found === undefined ? [] : [slipsInWords(found)];
+    .map((numbers) => likelySlipsInWords(repairs(numbers, usualReading(numbers, 'log'))));
+  return found.find((sentences) => sentences.length > 0) ?? [];
+}
+
+/** Single slips in a sentence, the first few by name; none where too many would do. */
+export function likelySlipsInWords(found: readonly Repair[]): readonly string[] {
+  const slips = found.filter(isLikely);
+  return slips.length > 0 && slips.length <= TOO_MANY_SLIPS ? [slipsInWords(slips)] : [];
 }
 
 /**
@@ -75,7 +87,6 @@ function slipsIn(all: ReportedNumbers, without: ReportedNumbers): readonly strin
  * A lopsided interval explains limits, and not a p that differs from them.
  */
 function isPlausible(explanation: Explanation, withP: boolean): boolean {
-  if (explanation.kind === 't distribution') return explanation.most >= FEWEST_DEGREES;
   if (explanation.kind === 'asymmetric interval') return !withP;
   return explanation.kind !== 'log scale';
 }

@@ -63,7 +63,7 @@ const OTHER_TEST = new RegExp(
     + '|Wilcoxon|Gray\\S* test|Bonferroni|Holm|Hochberg|Dunnett|false discovery|FDR'
     + '|multiple (?:testing|comparisons)'
     + '|multiplicity|one.sided|one.tailed|non.?inferiority|superiority|equivalence'
-    + '|trend|interaction|heterogeneity|overall p|global p)\\b',
+    + '|overall p|global p)\\b',
   'i',
 );
 

@@ -22,8 +22,8 @@ export function pooled(flags: readonly Flag[]): readonly Flag[] {
 }
 
 /** The same for flags of one rule and grade in one table; flags elsewhere have each their own. */
-function keyOf({ rule, grade, result, span }: Flag, numbers: Map<Table, number>): string {
-  const table = result?.cell?.table;
+function keyOf({ rule, grade, place, span }: Flag, numbers: Map<Table, number>): string {
+  const { table } = place;
   if (table === undefined) return `${rule} at ${span.start}-${span.end}`;
   const number = numbers.get(table) ?? numbers.size;
   numbers.set(table, number);
@@ -32,7 +32,7 @@ function keyOf({ rule, grade, result, span }: Flag, numbers: Map<Table, number>)
 
 function gather(group: readonly Flag[]): Flag {
   const [first, ...others] = group as readonly [Flag, ...Flag[]];
-  const table = first.result?.cell?.table.label || 'the same table';
+  const table = first.place.table?.label || 'the same table';
   const rows = others.flatMap(({ result }) => result?.cell?.row ?? []);
   const also = `The same holds of ${others.length} more in ${table}`;
   return {

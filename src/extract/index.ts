@@ -16,6 +16,8 @@ import { prevalencesIn } from './prevalences.ts';
 import { promiseOf, type Promised } from './promise.ts';
 import { type Customs, resolveResults, resolveStatistics } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
+import { sheetOf } from './tables/sheet.ts';
+import { countsInTable } from './tables/table-counts.ts';
 import { resultsInTable } from './tables/table-results.ts';
 import type { Token } from './token.ts';
 
@@ -41,11 +43,12 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
   const customs = customsOf(prose.map(({ passage }) => passage));
   const found = prose.map((block) => findingsOf(text, block, customs));
   const context = { text, style, marks, definitions, customs };
-  const tabled = manuscript.tables.flatMap((table) => resultsInTable(table, context));
+  const sheets = manuscript.tables.map((table) => sheetOf(table, context));
+  const tabled = sheets.flatMap(resultsInTable);
   return {
     results: inOrder([...found.flatMap(({ results }) => results), ...tabled]),
     claims: found.flatMap(({ claims }) => claims),
-    counts: found.flatMap(({ counts }) => counts),
+    counts: [...found.flatMap(({ counts }) => counts), ...sheets.flatMap(countsInTable)],
     prevalences: found.flatMap(({ prevalences }) => prevalences),
   };
 }

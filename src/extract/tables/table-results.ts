@@ -1,47 +1,21 @@
 import {
-  type Cell, cover, type Inheritable, type Mark, type PValue, type Result, type Table,
+  type Cell, cover, type Inheritable, type PValue, type Result,
 } from '../../model/index.ts';
-import type { Definitions } from '../definitions.ts';
-import { lex } from '../lex.ts';
-import type { NumberStyle } from '../number.ts';
 import type { Item } from '../parse/item.ts';
-import { readItems } from '../parse/items.ts';
 import { A_RATIO, AN_AMOUNT, fitsNumbers } from '../resolve/naming.ts';
-import { type Customs, resultOf } from '../resolve/results.ts';
+import { resultOf } from '../resolve/results.ts';
 import type { Naming } from '../vocabulary.ts';
 import { type CellValue, valuesIn } from './cell-values.ts';
-import { type Grid, gridOf } from './grid.ts';
 import { type Heading, headingOf, joinHeadings } from './heading.ts';
-import { type Labels, labelsOf } from './labels.ts';
-
-/** What a manuscript tells of how its cells are to be read. */
-export interface TableContext {
-  readonly text: string;
-  readonly style: NumberStyle;
-  readonly marks: readonly Mark[];
-  readonly definitions: Definitions;
-  readonly customs: Customs;
-}
-
-/** A table made ready for reading: its grid, its margins, and every cell's items. */
-interface Sheet {
-  readonly grid: Grid;
-  readonly labels: Labels;
-  readonly itemsOf: (cell: Cell) => readonly Item[];
-  readonly caption: Heading;
-  readonly notes: Heading;
-  readonly context: TableContext;
-  /** Whether any number of the table is negative, so that it holds no ratios alone. */
-  readonly hasNegative: () => boolean;
-}
+import type { Sheet } from './sheet.ts';
 
 /**
  * The results of a table. What a cell's numbers are values of is told by the cell
  * itself, the heading over its column, the label before its row, the group it
  * stands in, the caption, and the notes, in this order.
  */
-export function resultsInTable(table: Table, context: TableContext): readonly Result[] {
-  const sheet = sheetOf(table, context);
+export function resultsInTable(sheet: Sheet): readonly Result[] {
+  const { table } = sheet.grid;
   const inForce = columnHeadings(sheet);
   const results: Result[] = [];
   for (let row = sheet.labels.headingRows; row < table.rowCount; row++) {
@@ -49,36 +23,6 @@ export function resultsInTable(table: Table, context: TableContext): readonly Re
     results.push(...resultsInRow(sheet, row, inForce));
   }
   return results;
-}
-
-function sheetOf(table: Table, context: TableContext): Sheet {
-  const { text, definitions, style, marks } = context;
-  const grid = gridOf(text, table);
-  const read = (span: { start: number; end: number }): readonly Item[] =>
-    readItems(text, lex(text, span, { ...style, cell: true }, marks), definitions);
-  const cache = new Map<Cell, readonly Item[]>();
-  const itemsOf = (cell: Cell): readonly Item[] => {
-    const known = cache.get(cell) ?? read(cell.span);
-    cache.set(cell, known);
-    return known;
-  };
-  const isEmptyRow = (row: number): boolean => {
-    for (let column = 1; column < table.columnCount; column++) {
-      const words = grid.words(row, column);
-      if (words !== '' && grid.at(row, column) !== grid.at(row, 0)) return false;
-    }
-    return true;
-  };
-  return {
-    grid,
-    labels: labelsOf(grid, isEmptyRow),
-    itemsOf,
-    caption: headingOf(table.caption === undefined ? [] : read(table.caption)),
-    notes: headingOf(table.notes.flatMap(read)),
-    context,
-    hasNegative: () => table.cells.some((cell) => itemsOf(cell).some((item) =>
-      item.kind === 'number' && item.printed.value < 0)),
-  };
 }
 
 /** The headings over the columns, joined over their levels. */

@@ -41,7 +41,7 @@ export function countsInTable(sheet: Sheet): readonly Count[] {
   return counts;
 }
 
-const PERCENTAGES = /%|per\s?cent|\bn\b|\bno\b/i;
+const PERCENTAGES = /%|per\s?cent/i;
 const OTHERS = /\bmean|median|\bsd\b|iqr|range|±|\bse\b|ratio|\bci\b|interval/i;
 
 /** Whether the heading, the row's label or its group speak of counts and percentages. */
@@ -150,6 +150,13 @@ function isPlainlyOf(cell: CellCount, cells: readonly CellCount[], size: number)
 /** Whether the rows of a cell's group add up to a total of their own: 30 (50.0) and 30 (50.0). */
 function sharesTotal(cell: CellCount, cells: readonly CellCount[]): boolean {
   const group = cells.filter((other) => other.group === cell.group && other.group !== '');
-  const sum = group.reduce((total, { count }) => total + count.value, 0);
-  return group.length > 1 && group.every((other) => isOf(other, sum));
+  const at = cells.indexOf(cell);
+  const beside = [[cells[at - 1], cell], [cell, cells[at + 1]]] as const;
+  return addUp(group) || beside.some((pair) => addUp(pair.filter((one) => one !== undefined)));
+}
+
+/** Whether several percentages are of the sum of their counts. */
+function addUp(cells: readonly CellCount[]): boolean {
+  const sum = cells.reduce((total, { count }) => total + count.value, 0);
+  return cells.length > 1 && cells.every((cell) => isOf(cell, sum));
 }

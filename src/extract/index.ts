@@ -13,7 +13,7 @@ import { findStatistics } from './parse/statistics.ts';
 import { type Passage, passageOf } from './parse/passage.ts';
 import { customsOf } from './resolve/customs.ts';
 import { prevalencesIn } from './prevalences.ts';
-import { promiseOf, type Promised } from './promise.ts';
+import { mattering, promiseOf, type Promised } from './promise.ts';
 import { type Customs, resolveResults, resolveStatistics } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
 import { sheetOf } from './tables/sheet.ts';
@@ -35,9 +35,9 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
   const prose = manuscript.blocks.filter(isProse).flatMap(({ span }): readonly Prose[] => {
     const promised = promiseOf(text, span);
     if (promised === 'nothing') return [];
-    const tokens = lex(text, span, style, marks);
-    const items = readItems(text, tokens, definitions);
     const sentences = promised === 'results' ? split(text, span) : [span];
+    const tokens = mattering(text, sentences).flatMap((part) => lex(text, part, style, marks));
+    const items = readItems(text, tokens, definitions);
     return [{ promised, tokens, passage: passageOf(items, sentences) }];
   });
   const customs = customsOf(prose.map(({ passage }) => passage));

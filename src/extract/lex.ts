@@ -1,4 +1,4 @@
-import type { Mark, Relation, Span } from '../model/index.ts';
+import { indexAt, type Mark, type Relation, type Span } from '../model/index.ts';
 import { CharacterClass, classAt, superscriptDigit } from './characters.ts';
 import { type NumberStyle, scanNumber, startsNumber } from './number.ts';
 import type { Token, TokenKind } from './token.ts';
@@ -26,7 +26,8 @@ export function lex(
   style: NumberStyle = POINTS,
   marks: readonly Mark[] = [],
 ): Token[] {
-  const scan: Scan = { text, end: span.end, style, marks, tokens: [], mark: 0, spaced: true };
+  const mark = Math.max(0, indexAt(marks, span.start));
+  const scan: Scan = { text, end: span.end, style, marks, tokens: [], mark, spaced: true };
   let at = span.start;
   while (at < span.end) at = step(scan, at);
   return scan.tokens;

@@ -17,6 +17,7 @@ export function labelsOf(grid: Grid, isEmptyRow: (row: number) => boolean): Labe
   const { rowCount, columnCount } = grid.table;
   let headingRows = 0;
   while (headingRows < rowCount && grid.isHeaderRow(headingRows)) headingRows++;
+  while (headingRows > 1 && isGroupRow(grid, headingRows - 1)) headingRows--;
   const columns = Array.from({ length: columnCount }, (_, column) =>
     joined(range(0, headingRows).map((row) => grid.words(row, column)), ' '));
   const groups = groupsOf(grid, headingRows, isEmptyRow);
@@ -26,6 +27,13 @@ export function labelsOf(grid: Grid, isEmptyRow: (row: number) => boolean): Labe
     group: (row) => groups[row] ?? '',
     row: (row) => joined([groups[row] ?? '', ...labelCells(grid, row)], ' / '),
   };
+}
+
+/** Whether the last of the rows read as headings holds a label alone: the first group's. */
+function isGroupRow(grid: Grid, row: number): boolean {
+  const label = grid.at(row, 0);
+  if (row === 0 || label === undefined || label.columnSpan > 1 || grid.words(row, 0) === '') return false;
+  return range(1, grid.table.columnCount).every((column) => grid.words(row, column) === '');
 }
 
 function groupsOf(

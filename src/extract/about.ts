@@ -2,16 +2,23 @@ import { type About, cover, quote, type Span } from '../model/index.ts';
 import type { Reach } from './claims/reach.ts';
 import type { Token } from './token.ts';
 
-const QUANTITIES = new Set(['risk', 'risks', 'odds', 'hazard', 'hazards', 'ratio', 'ratios', 'or', 'hr', 'rr',
-  'irr', 'pr', 'ors', 'hrs', 'rrs', 'aor', 'ahr', 'likelihood', 'probability', 'chance', 'rate', 'rates',
-  'prevalence', 'incidence', 'proportion', 'frequency', 'predictor', 'predictors', 'predicted']);
+const QUANTITIES = new Set([
+  'risk', 'risks', 'odds', 'hazard', 'hazards', 'ratio', 'ratios', 'or', 'hr', 'rr', 'irr',
+  'pr', 'ors', 'hrs', 'rrs', 'aor', 'ahr', 'likelihood', 'probability', 'chance', 'rate',
+  'rates', 'prevalence', 'incidence', 'proportion', 'frequency', 'predictor', 'predictors',
+  'predicted',
+]);
 
-const ENDS = new Set(['among', 'in', 'compared', 'than', 'was', 'were', 'is', 'by', 'with', 'at', 'after',
-  'during', 'within', 'between', 'when', 'who', 'and', 'but', 'versus', 'vs', 'had', 'across', 'from',
-  'for', 'per', 'relative', 'comparing', 'according', 'to', 'over', 'are', 'being', 'as', 'on']);
+const ENDS = new Set([
+  'among', 'in', 'compared', 'than', 'was', 'were', 'is', 'by', 'with', 'at', 'after', 'during',
+  'within', 'between', 'when', 'who', 'and', 'but', 'versus', 'vs', 'had', 'across', 'from',
+  'for', 'per', 'relative', 'comparing', 'according', 'to', 'over', 'are', 'being', 'as', 'on',
+]);
 
-const ARTICLES = new Set(['the', 'a', 'an', 'any', 'subsequent', 'developing', 'having', 'having', 'increased',
-  'higher', 'lower', 'reduced', 'greater', 'being', 'decreased', 'elevated', 'significantly']);
+const ARTICLES = new Set([
+  'the', 'a', 'an', 'any', 'subsequent', 'developing', 'having', 'having', 'increased',
+  'higher', 'lower', 'reduced', 'greater', 'being', 'decreased', 'elevated', 'significantly',
+]);
 
 /** The longest name of an outcome, in words. */
 const LONGEST = 8;
@@ -84,32 +91,68 @@ function wordsAt(text: string, span: Span): string {
   return quote(text, span).replace(/\s+/g, ' ');
 }
 
-const INTRODUCES = new Set(['and', 'or', 'with', 'included', 'include', 'including', 'were', 'was', 'are', 'by',
-  'of', 'than', 'that', 'had', 'between', 'among', 'for', 'in', 'while', 'but', 'whereas', 'as', 'from', 'on']);
+const INTRODUCES = new Set([
+  'and', 'or', 'with', 'included', 'include', 'including', 'were', 'was', 'are', 'by', 'of',
+  'than', 'that', 'had', 'between', 'among', 'for', 'in', 'while', 'but', 'whereas', 'as',
+  'from', 'on',
+]);
 
-const VERBS = new Set(['was', 'were', 'is', 'are', 'had', 'has', 'have', 'increased', 'reduced', 'increases',
-  'reduces', 'showed', 'resulted', 'predicted', 'remained', 'lowered', 'raised', 'doubled', 'did', 'improved']);
+const VERBS = new Set([
+  'was', 'were', 'is', 'are', 'had', 'has', 'have', 'increased', 'reduced', 'increases',
+  'reduces', 'showed', 'resulted', 'predicted', 'remained', 'lowered', 'raised', 'doubled',
+  'did', 'improved',
+]);
 
 /**
  * The exposure: the words before a result's bracket in a list, or else the subject of
- * its sentence.
+ * its sentence, where the sentence names an outcome besides.
  *
  * ```
  * low education (AOR=3.80 …), parity above three (AOR=2.09 …)     Tarring was associated with
  * ^^^^^^^^^^^^^               ^^^^^^^^^^^^^^^^^^                  ^^^^^^^
  * ```
  */
-function termIn(text: string, { before, follows }: Reach, outcome: string | undefined): string | undefined {
+function termIn(text: string, reach: Reach, outcome: string | undefined): string | undefined {
+  const { before, follows } = reach;
   const open = openingBracket(before);
-  const listed = open === undefined ? undefined : phraseBefore(before, open);
+  const listed = open === undefined ? undefined : phraseBefore(reach, open);
   if (listed !== undefined && (outcome === undefined || !sameWords(wordsAt(text, listed), outcome))) {
     return wordsAt(text, listed);
   }
-  if (follows) return undefined;
+  if (follows || outcome === undefined) return undefined;
+  const subject = subjectOf(before);
+  return subject === undefined ? undefined : wordsAt(text, subject);
+}
+
+// After adjustment, night work significantly increased the odds
+//                   ^^^^^^^^^^
+function subjectOf(before: readonly Token[]): Span | undefined {
   const verb = before.findIndex(({ word }) => VERBS.has(word));
-  const subject = verb > 0 ? nounPhrase(before.slice(0, verb), 0) : undefined;
-  const isWhole = subject !== undefined && subject.end === before[verb - 1]?.span.end;
-  return isWhole && !QUANTITIES.has(before[0]?.word ?? '') ? wordsAt(text, subject) : undefined;
+  if (verb < 1) return undefined;
+  const start = before.findLastIndex(({ kind }, at) => kind === 'comma' && at < verb) + 1;
+  let end = verb;
+  while (end > start && isAdverb(before[end - 1])) end--;
+  const words = before.slice(start, end);
+  if (QUANTITIES.has(words[0]?.word ?? '') || !isName(words)) return undefined;
+  const subject = nounPhrase(words, 0);
+  return subject?.end === before[end - 1]?.span.end ? subject : undefined;
+}
+
+function isAdverb(token: Token | undefined): boolean {
+  return token !== undefined && (token.word.endsWith('ly') || token.word === 'also');
+}
+
+/** Words that no name holds: what has one of them is a clause, or points elsewhere. */
+const NOT_IN_NAMES = new Set([
+  'not', 'no', 'significant', 'nonsignificant', 'well', 'before', 'after', 'this', 'these',
+  'which', 'who', 'that', 'there', 'it', 'we', 'they', 'both', 'neither', 'either',
+  'respectively', 'result', 'results', 'here', 'analysis', 'model', 'more', 'less', 'most',
+]);
+
+/** Whether words can name an exposure: "helped" and "mattered" inside would make them a clause. */
+function isName(tokens: readonly Token[]): boolean {
+  return tokens.length > 0 && !isAdverb(tokens.at(-1)) && tokens.every(({ word }, at) =>
+    !NOT_IN_NAMES.has(word) && !VERBS.has(word) && (at === 0 || !word.endsWith('ed')));
 }
 
 /** The bracket that a result stands in, right behind what it is about. */
@@ -123,16 +166,44 @@ function openingBracket(before: readonly Token[]): number | undefined {
 }
 
 /** The words right before token `end`, back to where the list or the clause began. */
-function phraseBefore(tokens: readonly Token[], end: number): Span | undefined {
+function phraseBefore({ before: tokens, behind, follows }: Reach, end: number): Span | undefined {
   let start = end;
   while (start > 0 && end - start < LONGEST) {
     const { kind, word } = tokens[start - 1] as Token;
     if ((kind !== 'word' && kind !== 'dash') || INTRODUCES.has(word)) break;
     start--;
   }
+  const isSubject = start === 0 && leadsToVerb(behind);
+  if (!isSubject && !beginsName(tokens, start - 1, follows)) return undefined;
   while (ARTICLES.has(tokens[start]?.word ?? '')) start++;
   const [first, last] = [tokens[start], tokens[end - 1]];
-  return first === undefined || last === undefined || start >= end ? undefined : cover(first.span, last.span);
+  if (first === undefined || last === undefined) return undefined;
+  return isName(tokens.slice(start, end)) ? cover(first.span, last.span) : undefined;
+}
+
+const LISTING = new Set(['included', 'include', 'including', 'by']);
+
+const LISTED = new Set([
+  'predictors', 'predictor', 'factors', 'factor', 'determinants', 'determinant', 'variables',
+  'correlates', 'causes', 'characteristics',
+]);
+
+// predictors were damp rooms (OR …), tar (OR …) and rank (OR …)   but not: in the hills (OR …)
+//            ^^^^                  ^            ^^^
+function beginsName(tokens: readonly Token[], at: number, follows: boolean): boolean {
+  const { kind, word } = tokens[at] ?? { kind: undefined, word: '' };
+  if (word === 'were' || word === 'was' || word === 'are') {
+    return tokens.some((token) => LISTED.has(token.word));
+  }
+  return kind === 'colon' || kind === 'semicolon' || LISTING.has(word)
+    || (follows && (kind === 'comma' || word === 'and' || word === 'or'));
+}
+
+// Schooling (OR 0.55 …) was associated with
+//                       ^^^
+function leadsToVerb(behind: readonly Token[]): boolean {
+  const closed = behind.findIndex(({ kind }) => kind === 'close');
+  return VERBS.has(behind[closed + 1]?.word ?? '');
 }
 
 function sameWords(one: string, other: string): boolean {

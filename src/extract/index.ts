@@ -16,6 +16,7 @@ import { prevalencesIn } from './prevalences.ts';
 import { mattering, promiseOf, type Promised } from './promise.ts';
 import { type Customs, resolveResults, resolveStatistics } from './resolve/results.ts';
 import { loadSentenceSplitter } from './sentences.ts';
+import { withCoefficients } from './tables/coefficient-rows.ts';
 import { sheetOf } from './tables/sheet.ts';
 import { countsInTable } from './tables/table-counts.ts';
 import { resultsInTable } from './tables/table-results.ts';
@@ -44,7 +45,7 @@ export async function extract(manuscript: Manuscript): Promise<Findings> {
   const found = prose.map((block) => findingsOf(text, block, customs));
   const context = { text, style, marks, definitions, customs };
   const sheets = manuscript.tables.map((table) => sheetOf(table, context));
-  const tabled = sheets.flatMap(resultsInTable);
+  const tabled = sheets.flatMap((sheet) => withCoefficients(sheet, resultsInTable(sheet)));
   return {
     results: inOrder([...found.flatMap(({ results }) => results), ...tabled]),
     claims: found.flatMap(({ claims }) => claims),

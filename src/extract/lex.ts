@@ -246,12 +246,13 @@ const RELATIONS: Readonly<Record<string, Relation>> = {
 function readRelation(scan: Scan, at: number): number {
   const { text } = scan;
   const first = RELATIONS[text[at] as string] ?? '=';
-  const more = /^(\s*)(or\s*(?:=|equal to)|[=<>≤≥])/.exec(text.slice(at + 1, at + 16));
+  const more = /^(\s*)(or\s*(?:=|equal to)|[=<>≤≥‹›])/.exec(text.slice(at + 1, at + 16));
   if (more === null) return push(scan, 'relation', at, at + 1, text[at] as string, first);
   const end = at + 1 + more[0].length;
   const second = more[2] as string;
-  // "P = < 0.01" says "less than"; "=<" without a space says "at most".
-  const replaced = more[1] !== '' && first === '=' ? RELATIONS[second] : undefined;
+  // "P = < 0.01" and "p=‹0.01" say "less than"; "=<" without a space says "at most".
+  const isFont = second === '‹' || second === '›';
+  const replaced = (more[1] !== '' || isFont) && first === '=' ? RELATIONS[second] : undefined;
   return push(scan, 'relation', at, end, text[at] as string, replaced ?? combine(first, second));
 }
 

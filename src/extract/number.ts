@@ -101,16 +101,17 @@ function endOfWhole(context: NumberContext, at: number): number {
   return end;
 }
 
-// 2,43 (1.37–4.29)   (0.59, 1,51)   but not: (17,48)   1,234
-// ^^^^                      ^^^^
+// 2,43 (1.37–4.29)   (0.59, 1,51)   0,107   but not: (17,48)   1,234
+// ^^^^                      ^^^^    ^^^^^
 /**
  * Whether a comma is a decimal point that slipped in among points: one or two digits
  * stand behind it, and where it stands it can separate nothing.
  */
 function isStrayComma({ text, limit, style, stray }: NumberContext, comma: number): boolean {
-  const end = endOfDigits(text, comma + 1, Math.min(limit, comma + 4));
+  const end = endOfDigits(text, comma + 1, Math.min(limit, comma + 6));
   const digits = end - comma - 1;
-  if (digits < 1 || digits > 2 || classAt(text, end) === CharacterClass.point) return false;
+  const isZero = style.cell === true && text[comma - 1] === '0' && !isDigit(text, comma - 2);
+  if (digits < 1 || digits > (isZero ? 4 : 2) || classAt(text, end) === CharacterClass.point) return false;
   if (stray) return digits === 2;
   if (style.cell !== true) return false;
   const next = classAt(text, end);

@@ -197,7 +197,7 @@ export const INTERVAL_NAMES = phrasebook<'confidence' | 'credible'>([
     + '| confidence limits | confidence bounds | confidence range | conf interval | c i '
     + '| confidence intervalls | confidence interval limits | fiducial limits | confident interval '
     + '| confidence internal | confidential interval | confidence level | conﬁdence interval '
-    + '| cinf | lcl ucl | confident intervals | confidence levels', 'confidence'],
+    + '| cinf | rci | repeated confidence interval | lcl ucl | confident intervals | confidence levels', 'confidence'],
   ['credible interval | credible intervals | credibility interval | credibility intervals | cri '
     + '| crl | crls | cris | bayesian credible interval | posterior interval | hpd | hdi | bci '
     + '| bayesian confidence interval | highest density interval | uncertainty interval '

@@ -1,7 +1,15 @@
 import type { Token } from '../token.ts';
 
-const COMPARED = new Set(['likely', 'frequent', 'frequently', 'often', 'common', 'commonly', 'prone', 'probable',
-  'prevalent', 'susceptible', 'effective', 'durable', 'favorable', 'favourable', 'rapid', 'rapidly', 'severe']);
+const COMPARED = new Set([
+  'likely', 'frequent', 'frequently', 'often', 'common', 'commonly', 'prone', 'probable',
+  'prevalent', 'susceptible',
+]);
+
+/** Before these, a word that compares tells how strong an effect is, not which way it points. */
+const EFFECTS = new Set([
+  'effect', 'effects', 'benefit', 'benefits', 'efficacy', 'reduction', 'reductions', 'decrease',
+  'increase', 'protection', 'improvement',
+]);
 
 const STEPS = new Set(['per', 'each', 'every', 'unit', 'sd', 'decile', 'quartile', 'quintile']);
 
@@ -21,6 +29,9 @@ export function isOfAmount(tokens: readonly Token[], at: number): boolean {
   if (next?.word === 'from' || before?.word === 'or') return true;
   if (next?.word === 'than' && tokens[at + 2]?.kind === 'number') return true;
   if (next?.kind === 'dash' && !next.spaced) return true;
+  const isAdjective = !EFFECTS.has(word);
+  if (isAdjective && tokens.slice(at + 1, at + 4).some((other) => EFFECTS.has(other.word)))
+    return true;
   return word.startsWith('increase') || word.startsWith('decrease') || word === 'higher'
     ? isStep(tokens, at)
     : false;

@@ -4,7 +4,9 @@ import type { Token } from '../token.ts';
 import { firstClause, hasTurn, hasVerb, saidBefore } from './clauses.ts';
 import type { Reach } from './reach.ts';
 import { elliptic, type SaidOfSignificance, significanceIn } from './significance.ts';
-import { scaleIn, sizeIn } from './size.ts';
+import { NEGATIONS } from './negation.ts';
+import { scaleIn } from './scale.ts';
+import { sizeIn } from './size.ts';
 
 /**
  * What sentences say of their results, given the words within each result's reach:
@@ -14,7 +16,9 @@ export function findClaims(reaches: readonly Reach[]): readonly Claim[] {
   return bySentence(reaches).flatMap((sentence) => {
     const significance = throughList(sentence, significanceOf, significanceBehind);
     const direction = throughList(withListWords(sentence), directionOf, directionBehind);
-    return sentence.flatMap((reach, index) => claimsOf(reach, significance[index], direction[index]));
+    return sentence.flatMap((reach, index) =>
+      claimsOf(reach, significance[index], direction[index]),
+    );
   });
 }
 
@@ -43,7 +47,7 @@ function throughList<Said>(
 ): readonly (Said | undefined)[] {
   const answers = sentence.map(own);
   for (let at = 1; at < answers.length; at++) {
-    if (!hasTurn((sentence[at] as Reach).before)) answers[at] ??= answers[at - 1];
+    if (goesOn(sentence[at] as Reach)) answers[at] ??= answers[at - 1];
   }
   const trailing = sentence.at(-1) === undefined ? undefined : behind(sentence.at(-1) as Reach);
   for (let at = answers.length - 1; at >= 0; at--) {
@@ -53,6 +57,12 @@ function throughList<Said>(
   return answers;
 }
 
+/** Whether a result further down a list shares what was said before it. */
+function goesOn({ before }: Reach): boolean {
+  const denies = hasVerb(before) && before.some(({ word }) => NEGATIONS.has(word));
+  return !denies && !hasTurn(before);
+}
+
 /**
  * The results of a sentence, those without a verb of their own with the words of
  * those before them: a list says once which way all of it points.
@@ -60,8 +70,8 @@ function throughList<Said>(
 function withListWords(sentence: readonly Reach[]): readonly Reach[] {
   let words: readonly Token[] = [];
   return sentence.map((reach) => {
-    const goesOn = reach.follows && !hasVerb(reach.before) && !hasTurn(reach.before);
-    words = goesOn ? [...words, ...reach.before].slice(-LONGEST_LIST) : reach.before;
+    const isListed = reach.follows && !hasVerb(reach.before) && goesOn(reach);
+    words = isListed ? [...words, ...reach.before].slice(-LONGEST_LIST) : reach.before;
     return { ...reach, before: words };
   });
 }
@@ -71,15 +81,19 @@ const LONGEST_LIST = 200;
 
 /** Words behind a result outweigh those before it only where they state significance. */
 function significanceOf({ before, behind }: Reach): SaidOfSignificance | undefined {
-  const own = saidBefore(before, (clause, turned) => significanceIn(clause) ?? elliptic(clause, turned));
+  const own = saidBefore(
+    before,
+    (clause, turned) => significanceIn(clause) ?? elliptic(clause, turned),
+  );
   const after = significanceIn(firstClause(behind));
-  return after?.manner === 'stated' && own?.manner !== 'stated' ? after : own;
+  return after?.manner === 'stated' && own?.manner !== 'stated' ? after : (own ?? after);
 }
 
 const significanceBehind = ({ behind }: Reach) => significanceIn(firstClause(behind));
 
-const directionOf = ({ before, result }: Reach): SaidOfDirection | undefined =>
-  saidBefore(before, (clause) => directionIn(clause, result));
+const directionOf = ({ before, behind, result }: Reach): SaidOfDirection | undefined =>
+  saidBefore(before, (clause) => directionIn(clause, result))
+  ?? directionIn(firstClause(behind), result);
 
 const directionBehind = ({ behind, result }: Reach) => directionIn(firstClause(behind), result);
 
@@ -95,7 +109,12 @@ function claimsOf(
   if (significance !== undefined) claims.push({ kind: 'significance', ...common, ...significance });
   if (direction !== undefined) claims.push({ kind: 'direction', ...common, ...direction });
   if (size !== undefined) {
-    claims.push({ kind: 'size', ...common, ...size, ...(scale === undefined ? {} : { scale: scale.scale }) });
+    claims.push({
+      kind: 'size',
+      ...common,
+      ...size,
+      ...(scale === undefined ? {} : { scale: scale.scale }),
+    });
   }
   if (scale !== undefined) claims.push({ kind: 'scale', ...common, ...scale });
   return claims;

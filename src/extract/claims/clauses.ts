@@ -1,9 +1,13 @@
 import type { Token } from '../token.ts';
 
-const TURNS = new Set(['but', 'whereas', 'while', 'although', 'though', 'however', 'yet', 'except']);
+const TURNS = new Set([
+  'but', 'whereas', 'while', 'although', 'though', 'however', 'yet', 'except',
+]);
 
-const VERBS = new Set(('was were is are had did has have showed shows found observed associated remained '
-  + 'became increased decreased reduced raised lowered predicted developed died occurred').split(' '));
+const VERBS = new Set((
+  'was were is are had did has have showed shows found observed associated remained became '
+  + 'increased decreased reduced raised lowered predicted developed died occurred'
+).split(' '));
 
 /** Whether a clause has a verb of its own, so that it need not borrow one from before. */
 export function hasVerb(tokens: readonly Token[]): boolean {
@@ -41,7 +45,7 @@ function clausesOf(tokens: readonly Token[]): readonly Clause[] {
   tokens.forEach(({ kind, word }, at) => {
     if (kind === 'open') depth++;
     if (kind === 'close') depth = Math.max(0, depth - 1);
-    const turns = TURNS.has(word);
+    const turns = TURNS.has(word) || isStop(tokens, at);
     if (!turns && !(kind === 'semicolon' && depth === 0)) return;
     clauses.push({ tokens: tokens.slice(start, at), turned });
     [start, turned] = [at + 1, turns];
@@ -50,8 +54,15 @@ function clausesOf(tokens: readonly Token[]): readonly Clause[] {
   return clauses.reverse();
 }
 
+// "… were few., Main results, Six trials": a sentence's end that a heading hides
+function isStop(tokens: readonly Token[], at: number): boolean {
+  return tokens[at]?.word === '.' && tokens[at + 1]?.kind === 'comma';
+}
+
 /** Words by which a clause goes on speaking of what was said before it. */
-const ANAPHORS = new Set(['this', 'these', 'it', 'difference', 'differences', 'benefit', 'which', 'not']);
+const ANAPHORS = new Set([
+  'this', 'these', 'it', 'difference', 'differences', 'benefit', 'which', 'not',
+]);
 
 /**
  * What the clauses before a result say: the nearest one, or one further off where
@@ -84,8 +95,11 @@ export function firstClause(tokens: readonly Token[]): readonly Token[] {
   const from = afterBrackets(tokens);
   for (let at = from; at < tokens.length; at++) {
     const { kind, word } = tokens[at] as Token;
-    if (kind === 'semicolon' || word === 'and') return tokens.slice(0, at);
-    if (TURNS.has(word) && word !== 'but' && !speaksOn(tokens, at)) return tokens.slice(0, at);
+    const isAside = tokens[at - 1]?.kind === 'close' || tokens[at - 1]?.kind === 'comma';
+    const isNew =
+      word === 'and' || isStop(tokens, at) || (isAside && (word === 'with' || word === 'without'));
+    if (kind === 'semicolon' || isNew) return tokens.slice(0, at);
+    if (TURNS.has(word) && !speaksOn(tokens, at)) return tokens.slice(0, at);
   }
   return tokens;
 }
@@ -103,7 +117,13 @@ function afterBrackets(tokens: readonly Token[]): number {
   return after;
 }
 
-// 1.5 (0.9–2.3), although this was not significant
+// 1.5 (0.9–2.3), although this was not significant   0.88 (0.69–1.12) but was not significant
+//                ^^^^^^^^^^^^^                                         ^^^^^^^
 function speaksOn(tokens: readonly Token[], at: number): boolean {
-  return tokens.slice(at + 1, at + 4).some(({ word }) => ANAPHORS.has(word));
+  const next = tokens[at + 1]?.word ?? '';
+  if (isVerb(tokens, at + 1) || next === 'not') return true;
+  const named = next === 'the' || next === 'possible' ? tokens[at + 2] : tokens[at + 1];
+  return (
+    ANAPHORS.has(named?.word ?? '') || (next === 'the' && ANAPHORS.has(tokens[at + 3]?.word ?? ''))
+  );
 }

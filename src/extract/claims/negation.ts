@@ -1,9 +1,11 @@
 import type { Token } from '../token.ts';
 
 /** Words that deny what follows them. */
-export const NEGATIONS: ReadonlySet<string> = new Set(['no', 'not', 'nonstatistically', 'neither', 'nor', 'without',
-  'never', 'lacked', 'lack', 'cannot', 'failed', 'none', "didn't", "wasn't", "weren't", 'absence', 'loses',
-  'lost', 'fails', 'null', 'didn’t', 'wasn’t', 'weren’t']);
+export const NEGATIONS: ReadonlySet<string> = new Set([
+  'no', 'not', 'nonstatistically', 'neither', 'nor', 'without', 'never', 'lacked', 'lack',
+  'cannot', 'failed', 'none', "didn't", "wasn't", "weren't", 'absence', 'loses', 'lost', 'fails',
+  'null', 'didn’t', 'wasn’t', 'weren’t',
+]);
 
 /** The words that stand before, up to so many, not over a comma or a bracket's end. */
 export function wordsBefore(tokens: readonly Token[], at: number, count: number): readonly Token[] {

@@ -32,7 +32,9 @@ export function reachesOf(
     else others.push(result);
   }
   return [...bySentence].flatMap(([sentence, own]) =>
-    own.map((result, index) => reachOf(passage, words[sentence] ?? [], sentence, own, result, index)),
+    own.map((result, index) =>
+      reachOf(passage, words[sentence] ?? [], sentence, own, result, index),
+    ),
   );
 }
 
@@ -55,7 +57,10 @@ function reachOf(
     follows: previous !== undefined,
     before: previous === undefined ? leading : leading.slice(afterthought(leading)),
     inside: between(words, start, end),
-    behind: next === undefined ? trailing : trailing.slice(0, predicate(trailing) || afterthought(trailing)),
+    behind:
+      next === undefined
+        ? trailing
+        : trailing.slice(0, predicate(trailing) || afterthought(trailing)),
   };
 }
 
@@ -95,11 +100,17 @@ const MULTIPLIERS = new Set(['times', 'fold']);
 function predicate(words: readonly Token[]): number {
   const first = words.findIndex(({ kind }) => kind === 'word');
   const closed = words.findLastIndex(({ kind }, at) => kind === 'close' && at < 14);
-  const start = Math.max(first, words.findIndex(({ kind }, at) => kind === 'word' && at > closed));
+  const start = Math.max(
+    first,
+    words.findIndex(({ kind }, at) => kind === 'word' && at > closed),
+  );
   const { word } = words[start] ?? { word: '' };
   if (!VERBS.has(word) && !MULTIPLIERS.has(word)) return 0;
-  const end = words.findIndex(({ kind, word: joint }, at) => at > start
-    && (kind === 'comma' || kind === 'semicolon' || kind === 'open' || JOINS.has(joint)));
+  const end = words.findIndex(
+    ({ kind, word: joint }, at) =>
+      at > start
+      && (kind === 'comma' || kind === 'semicolon' || kind === 'open' || JOINS.has(joint)),
+  );
   return Math.max(0, end);
 }
 

@@ -1,5 +1,6 @@
-import { cover, type Printed, type Span, type SpokenScale } from '../../model/index.ts';
+import { cover, type Printed, type Span } from '../../model/index.ts';
 import type { Token } from '../token.ts';
+import { namesScale } from './scale.ts';
 
 /** How large a clause says an effect is, as a factor: 1.59 for "a 59% increase". */
 export interface SaidOfSize {
@@ -10,26 +11,60 @@ export interface SaidOfSize {
 
 /** Words that tell a factor by themselves. */
 const FACTORS: Readonly<Record<string, number>> = {
-  doubled: 2, doubling: 2, doubles: 2, tripled: 3, tripling: 3, trebled: 3, halved: 0.5, halving: 0.5,
-  halves: 0.5, quadrupled: 4, twofold: 2, threefold: 3, fourfold: 4, fivefold: 5, sixfold: 6, tenfold: 10,
+  doubled: 2,
+  doubling: 2,
+  doubles: 2,
+  tripled: 3,
+  tripling: 3,
+  trebled: 3,
+  halved: 0.5,
+  halving: 0.5,
+  halves: 0.5,
+  quadrupled: 4,
+  twofold: 2,
+  threefold: 3,
+  fourfold: 4,
+  fivefold: 5,
+  sixfold: 6,
+  tenfold: 10,
 };
 
 /** Words that tell a factor only before a quantity: "twice the odds", but not "twice daily". */
-const MULTIPLES: Readonly<Record<string, number>> = { twice: 2, thrice: 3, double: 2, triple: 3, half: 0.5 };
-
-const NUMBERS: Readonly<Record<string, number>> = {
-  two: 2, three: 3, four: 4, five: 5, six: 6, seven: 7, eight: 8, nine: 9, ten: 10,
+const MULTIPLES: Readonly<Record<string, number>> = {
+  twice: 2,
+  thrice: 3,
+  double: 2,
+  triple: 3,
+  half: 0.5,
 };
 
-const RISE = new Set(['increase', 'increased', 'higher', 'greater', 'more', 'elevated', 'rise', 'excess',
-  'increases', 'elevation', 'increasing', 'raised', 'raising', 'rose', 'raises']);
-const FALL = new Set(['reduction', 'reduced', 'lower', 'decrease', 'decreased', 'less', 'fewer', 'decline',
-  'reduces', 'reductions', 'decreases', 'drop', 'reducing', 'reduce', 'lowered', 'lowering', 'decreasing',
-  'fell', 'declined', 'lowers']);
+const NUMBERS: Readonly<Record<string, number>> = {
+  two: 2,
+  three: 3,
+  four: 4,
+  five: 5,
+  six: 6,
+  seven: 7,
+  eight: 8,
+  nine: 9,
+  ten: 10,
+};
+
+const RISE = new Set([
+  'increase', 'increased', 'higher', 'greater', 'more', 'elevated', 'rise', 'excess', 'increases',
+  'elevation', 'increasing', 'raised', 'raising', 'rose', 'raises',
+]);
+const FALL = new Set([
+  'reduction', 'reduced', 'lower', 'decrease', 'decreased', 'less', 'fewer', 'decline', 'reduces',
+  'reductions', 'decreases', 'drop', 'reducing', 'reduce', 'lowered', 'lowering', 'decreasing',
+  'fell', 'declined', 'lowers',
+]);
 
 /** Words that may stand between a percentage and the change it is of. */
-const BETWEEN = new Set(['relative', 'significant', 'risk', 'odds', 'hazard', 'rate', 'statistically',
-  'significantly', 'adjusted', 'independent']);
+const BETWEEN = new Set([
+  'relative', 'significant', 'risk', 'odds', 'hazard', 'rate', 'statistically', 'significantly',
+  'adjusted', 'independent',
+]);
 
 /**
  * The size that a clause speaks of, the nearest to its end.
@@ -55,9 +90,12 @@ export function sizeIn(tokens: readonly Token[]): SaidOfSize | undefined {
 // twice as likely   double the odds   half the risk   but not: twice daily   half of the women
 function multiplies(tokens: readonly Token[], at: number): boolean {
   const [next, quantity] = [tokens[at + 1]?.word ?? '', tokens[at + 2]?.word ?? ''];
-  if (next === 'as' || Object.hasOwn(SCALES, next)) return true;
-  return (next === 'the' || next === 'their') && tokens.slice(at + 2, at + 5).some(({ word }) =>
-    Object.hasOwn(SCALES, word)) && quantity !== 'patients';
+  if (next === 'as' || namesScale(next)) return true;
+  return (
+    (next === 'the' || next === 'their')
+    && tokens.slice(at + 2, at + 5).some(({ word }) => namesScale(word))
+    && quantity !== 'patients'
+  );
 }
 
 // three times as likely   two-fold
@@ -79,7 +117,9 @@ function isTimes(tokens: readonly Token[], at: number): boolean {
   const word = tokens[at]?.word;
   const next = tokens[at + 1]?.word ?? '';
   if (word === 'fold') return true;
-  return word === 'times' && next !== 'a' && next !== 'per' && next !== 'daily' && next !== 'weekly';
+  return (
+    word === 'times' && next !== 'a' && next !== 'per' && next !== 'daily' && next !== 'weekly'
+  );
 }
 
 function sizeAt(tokens: readonly Token[], at: number, printed: Printed): SaidOfSize | undefined {
@@ -99,8 +139,9 @@ function sizeAt(tokens: readonly Token[], at: number, printed: Printed): SaidOfS
 
 // per 10% increase   for each 5% rise
 function isStep(tokens: readonly Token[], at: number): boolean {
-  return tokens.slice(Math.max(0, at - 3), at).some(({ word }) =>
-    word === 'per' || word === 'each' || word === 'every');
+  return tokens
+    .slice(Math.max(0, at - 6), at)
+    .some(({ word }) => word === 'per' || word === 'each' || word === 'every');
 }
 
 interface Change {
@@ -123,11 +164,12 @@ function changeBehind(tokens: readonly Token[], from: number): Change | undefine
 
 // increased the odds by 59%   reduced by about 30%   a reduction of 30%
 function changeBefore(tokens: readonly Token[], at: number): Change | undefined {
-  const link = tokens[at - 1]?.kind === 'word' && ABOUT.has(tokens[at - 1]?.word ?? '') ? at - 2 : at - 1;
+  const link =
+    tokens[at - 1]?.kind === 'word' && ABOUT.has(tokens[at - 1]?.word ?? '') ? at - 2 : at - 1;
   const word = tokens[link]?.word;
   if (word === 'of') return changeAt(tokens, link - 1);
   if (word !== 'by') return undefined;
-  for (let index = link - 1; index >= Math.max(0, link - 8); index--) {
+  for (let index = link - 1; index >= Math.max(0, link - 14); index--) {
     const change = changeAt(tokens, index);
     if (change !== undefined) return change;
   }
@@ -135,39 +177,3 @@ function changeBefore(tokens: readonly Token[], at: number): Change | undefined 
 }
 
 const ABOUT = new Set(['about', 'around', 'approximately', 'some', 'nearly', 'almost']);
-
-/** The quantity that a clause speaks of, with the word that names it. */
-export interface SaidOfScale {
-  readonly scale: SpokenScale;
-  readonly span: Span;
-}
-
-const SCALES: Readonly<Record<string, SpokenScale>> = {
-  risk: 'risk', risks: 'risk', likely: 'risk', likelihood: 'risk', probability: 'risk', chance: 'risk',
-  chances: 'risk', odds: 'odds', hazard: 'hazard', hazards: 'hazard', rate: 'rate', rates: 'rate',
-  incidence: 'rate', prevalence: 'prevalence', likelier: 'risk',
-};
-
-const NOT_A_QUANTITY = new Set(['factor', 'factors', 'score', 'scores', 'group', 'groups', 'ratio', 'ratios',
-  'stratification', 'assessment', 'model', 'models', 'reduction', 'difference', 'set', 'ratings']);
-
-/** Before "risk" or "rate" these make a group, a measure or a reading of the body. */
-const NOT_OF_OUTCOMES = new Set(['at', 'high', 'low', 'relative', 'heart', 'respiratory', 'filtration', 'pulse',
-  'metabolic', 'sedimentation', 'flow', 'exchange', 'intermediate']);
-
-/**
- * Whether a clause speaks of odds, hazards, rates or risks; the names of measures
- * ("relative risk", "odds ratio") say nothing of that.
- */
-export function scaleIn(tokens: readonly Token[]): SaidOfScale | undefined {
-  for (let at = tokens.length - 1; at >= 0; at--) {
-    const { word, span } = tokens[at] as Token;
-    if (!Object.hasOwn(SCALES, word)) continue;
-    const before = tokens[at - 1];
-    const label = before?.kind === 'dash' ? tokens[at - 2]?.word : before?.word;
-    if (NOT_A_QUANTITY.has(tokens[at + 1]?.word ?? '')) continue;
-    if (NOT_OF_OUTCOMES.has(label ?? '')) continue;
-    return { scale: SCALES[word] as SpokenScale, span };
-  }
-  return undefined;
-}

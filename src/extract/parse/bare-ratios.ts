@@ -41,6 +41,7 @@ function isRatioNumber(items: readonly Item[], at: number): boolean {
   if (item.attached && items[at - 1]?.kind !== 'name') return false;
   const { value, decimals } = item.printed;
   if (value < 0 || (decimals === 0 && !isLinkedWhole(items, at))) return false;
+  if (decimals === 0 && isCutShort(items, at)) return false;
   if (isSpread(items, at + 1) || isBound(items[at - 1])) return false;
   return pairAt(items, at)?.joint !== 'range' && pairAt(items, at - 2)?.joint !== 'range';
 }
@@ -57,6 +58,12 @@ function isLinkedWhole(items: readonly Item[], at: number): boolean {
 function isSpread(items: readonly Item[], at: number): boolean {
   const item = items[at];
   return item?.kind === 'plus-minus' || (item?.kind === 'other' && item.word === '+');
+}
+
+// 0Æ72: a decimal point that a font lost leaves a whole number, which is none
+function isCutShort(items: readonly Item[], at: number): boolean {
+  const next = items[at + 1];
+  return next?.kind === 'word' && !next.spaced;
 }
 
 /** "HR < 1.176" states a margin, not a result. */

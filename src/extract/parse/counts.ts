@@ -33,7 +33,41 @@ function countAt(text: string, items: readonly Item[], at: number): Found | unde
   if (percent !== undefined) return behindPercent(text, items, at, percent);
   const number = wholeNumber(text, items, at);
   if (number === undefined || !isCountable(items, at, number.printed)) return undefined;
-  return withTotal(text, items, number) ?? withPercent(text, items, at, number);
+  return withTotal(text, items, number) ?? behindTotal(text, items, at, number)
+    ?? withPercent(text, items, at, number);
+}
+
+/** How far before "of which" the total may stand, in items. */
+const TOTAL_REACH = 6;
+
+// 34 articles, of which 9 (26%) were   120 ferrymen, of whom 45 fell
+// ^^                    ^  ^^^         ^^^                   ^^
+function behindTotal(
+  text: string,
+  items: readonly Item[],
+  at: number,
+  number: CountNumber,
+): Found | undefined {
+  const [of, which] = [items[at - 2], items[at - 1]];
+  const isOfWhich = of?.kind === 'word' && of.word === 'of'
+    && which?.kind === 'word' && (which.word === 'which' || which.word === 'whom');
+  if (!isOfWhich) return undefined;
+  for (let back = at - 3; back >= Math.max(0, at - 3 - TOTAL_REACH); back--) {
+    const total = items[back]?.kind === 'number' ? wholeNumber(text, items, back) : undefined;
+    if (items[back]?.kind === 'number' && total === undefined) return undefined;
+    if (total === undefined) continue;
+    const unit = items[total.end];
+    const isAmount = unit?.kind === 'word' && (isTime(unit) || unit.word === 'person');
+    if (isAmount || total.printed.value < number.printed.value) return undefined;
+    const isOpen = items[number.end]?.kind === 'open';
+    const percent = isOpen ? percentAt(items, number.end + 1) : undefined;
+    const isShare = percent !== undefined && endsQuantity(items, number.end + 2);
+    const parts = { count: number.printed, total: total.printed };
+    return isShare
+      ? found(items, { ...parts, percent }, number.end + 2)
+      : found(items, parts, number.end);
+  }
+  return undefined;
 }
 
 function percentAt(items: readonly Item[], at: number): Printed | undefined {
@@ -53,7 +87,7 @@ function wholeNumber(text: string, items: readonly Item[], at: number): CountNum
 // not: grade 3 (25%)   age ≥65 (45%)   in 2005 (45%)
 function isCountable(items: readonly Item[], at: number, { value }: Printed): boolean {
   const before = items[at - 1];
-  if (continuesWords(items, at)) return false;
+  if (continuesWords(items, at) || continuesDigits(items, at)) return false;
   if (before?.kind === 'relation') return isSampleSize(items, at);
   if (before?.kind === 'dash' || before?.kind === 'slash' || before?.kind === 'plus-minus') return false;
   const isYear = value >= 1900 && value < 2100 && before?.kind === 'word' && before.word === 'in';
@@ -69,10 +103,23 @@ function continuesWords(items: readonly Item[], at: number): boolean {
   return isLarge(before) || (isAnd && isLarge(items[at - 2])) || isLarge(items[at + 1]);
 }
 
+// 12 345 of 56 789 (21.7%): behind a plain space the end of a number cannot be told from a
+//    ^^^    ^^^^^^         number, and the total alone is no count
+function continuesDigits(items: readonly Item[], at: number): boolean {
+  const [before, item] = [items[at - 1], items[at]];
+  const isOf = before?.kind === 'word' && before.word === 'of';
+  if (isOf && items[at - 2]?.kind === 'number') return true;
+  return before?.kind === 'number' && /^\d{1,3}$/.test(before.printed.plain)
+    && item?.kind === 'number' && /^\d{3}$/.test(item.printed.text);
+}
+
 /** Words whose number is a name or a bound, not a count: "grade 3", "at least 5". */
-const NUMBERED = new Set(['grade', 'stage', 'phase', 'type', 'day', 'week', 'month', 'year', 'table', 'figure',
-  'fig', 'model', 'age', 'aged', 'score', 'class', 'version', 'per', 'than', 'least', 'level', 'ref',
-  'quartile', 'quintile', 'tertile', 'every', 'each', 'step', 'visit', 'group', 'arm', 'cycle', 'within']);
+const NUMBERED = new Set([
+  'grade', 'stage', 'phase', 'type', 'day', 'week', 'month', 'year', 'table', 'figure', 'fig',
+  'model', 'age', 'aged', 'score', 'class', 'version', 'per', 'than', 'least', 'level', 'ref',
+  'quartile', 'quintile', 'tertile', 'every', 'each', 'step', 'visit', 'group', 'arm', 'cycle',
+  'within',
+]);
 
 // n = 54
 function isSampleSize(items: readonly Item[], at: number): boolean {
@@ -84,7 +131,8 @@ function isSampleSize(items: readonly Item[], at: number): boolean {
 // 35 of 203 patients (17%)   45/120 (37.5%)   34 out of the 182
 function withTotal(text: string, items: readonly Item[], number: CountNumber): Found | undefined {
   const slash = items[number.end]?.kind === 'slash';
-  const start = slash ? number.end + 1 : afterOf(items, number.end);
+  const spoken = afterOf(items, number.end) ?? afterAmong(items, number.end);
+  const start = slash ? number.end + 1 : spoken;
   const total = start === undefined ? undefined : wholeNumber(text, items, start);
   if (total === undefined || items[total.end]?.kind === 'slash') return undefined;
   const bracket = openWithin(items, total.end, 5);
@@ -117,6 +165,26 @@ function afterOf(items: readonly Item[], at: number): number | undefined {
   return isOf ? next : undefined;
 }
 
+/** Of these there may be some among patients that are no share of them. */
+const OF_STUDIES = new Set([
+  'countries', 'centers', 'centres', 'sites', 'options', 'trials', 'studies', 'hospitals',
+  'treatment', 'treatments', 'groups', 'arms', 'doses', 'questions', 'items', 'variables',
+]);
+
+// 26 among the 194 children   23 events occurred among 189 children
+//    ^^^^^^^^^                   ^^^^^^^^^^^^^^^^^^^^^
+function afterAmong(items: readonly Item[], at: number): number | undefined {
+  for (let next = at; next < at + 4; next++) {
+    const item = items[next];
+    if (item?.kind !== 'word' || isTime(item) || OF_STUDIES.has(item.word)) return undefined;
+    if (item.word !== 'among') continue;
+    const article = items[next + 1];
+    const isThe = article?.kind === 'word' && (article.word === 'the' || article.word === 'all');
+    return isThe ? next + 2 : next + 1;
+  }
+  return undefined;
+}
+
 /** The bracket that opens within so many words. */
 function openWithin(items: readonly Item[], at: number, words: number): number | undefined {
   for (let next = at; next < at + words; next++) {
@@ -129,8 +197,10 @@ function openWithin(items: readonly Item[], at: number, words: number): number |
   return undefined;
 }
 
-const TIMES = new Set(['months', 'month', 'years', 'year', 'yrs', 'weeks', 'week', 'days', 'day', 'hours',
-  'minutes', 'mg', 'kg', 'g', 'ml', 'mm', 'cm', 'mmhg', 'points', 'mo', 'yr', 'h', 'min']);
+const TIMES = new Set([
+  'months', 'month', 'years', 'year', 'yrs', 'weeks', 'week', 'days', 'day', 'hours', 'minutes',
+  'mg', 'kg', 'g', 'ml', 'mm', 'cm', 'mmhg', 'points', 'mo', 'yr', 'h', 'min',
+]);
 
 function isTime(item: Item): boolean {
   return item.kind === 'word' && TIMES.has(item.word);

@@ -66,12 +66,19 @@ function readHeading(tokens: readonly Token[], at: number): Heading {
   for (; end < Math.min(tokens.length, at + 9); end++) {
     const { kind, word } = tokens[end] as Token;
     const passes = kind === 'dash' || kind === 'open' || kind === 'close' || kind === 'raised'
-      || word === '_' || (kind === 'word' && HEADING_WORDS.has(word));
+      || word === '_' || (kind === 'word' && HEADING_WORDS.has(word)) || isSubscript(tokens, end);
     if (!passes || (word === 'of' && tokens[end + 1]?.kind === 'number')) break;
     tests = TESTS[word] ?? tests;
     value ||= word === 'value' || word === 'values';
   }
   return { end, tests, value };
+}
+
+// P m = 0.60
+//   ^
+function isSubscript(tokens: readonly Token[], at: number): boolean {
+  const { kind, word } = tokens[at] as Token;
+  return kind === 'word' && word.length === 1 && tokens[at + 1]?.relation !== undefined;
 }
 
 interface Spoken {

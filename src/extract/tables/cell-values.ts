@@ -86,8 +86,11 @@ function pairBehind(items: readonly Item[], at: number): Pair | undefined {
   return next > at && pair?.joint === 'range' && items[next]?.kind === 'number' ? pair : undefined;
 }
 
+// 0.72* (0.58–0.89)   0.72ᵃ (0.58–0.89)
+//     ^                   ^
 function isMark(item: Item | undefined): boolean {
-  return item?.kind === 'star' || item?.kind === 'raised';
+  const isLetter = item?.kind === 'word' && item.word.length === 1 && !item.spaced;
+  return isLetter || item?.kind === 'star' || item?.kind === 'raised';
 }
 
 function closes(items: readonly Item[], at: number): boolean {

@@ -34,7 +34,10 @@ export function headingOf(items: readonly Item[]): Heading {
   const adjusted = adjustmentIn(items, names);
   const p = pHeading(items);
   const limit = limitIn(items);
-  const firm = names.map(({ naming }) => naming);
+  const firm = isExponential(items)
+    ? [EXPONENTIAL, ...names.map(({ naming }) => naming).filter(({ quantity }) =>
+      quantity.kind !== 'coefficient')]
+    : names.map(({ naming }) => naming);
   return {
     names: firm,
     ...(label === undefined ? {} : { label }),
@@ -44,6 +47,18 @@ export function headingOf(items: readonly Item[]): Heading {
     plain: isPlain(items, firm),
     spread: items.some((item) => item.kind === 'plus-minus' || isNamedSpread(item)),
   };
+}
+
+/** An exponential of a coefficient is a ratio, and the model tells of what. */
+const EXPONENTIAL: Naming = { quantity: { kind: 'ratio', measure: 'ratio' }, firm: true };
+
+// Exp(B)   exp(β)   EXP (coef)
+function isExponential(items: readonly Item[]): boolean {
+  const at = items.findIndex((item) => item.kind === 'word' && item.word === 'exp');
+  const inside = items[at + 2];
+  if (at < 0 || items[at + 1]?.kind !== 'open') return false;
+  return (inside?.kind === 'word' && /^(?:b|β|coeff?|beta)$/.test(inside.word))
+    || (inside?.kind === 'name' && inside.naming.quantity.kind === 'coefficient');
 }
 
 function adjustmentIn(items: readonly Item[], names: readonly NameItem[]): boolean | undefined {

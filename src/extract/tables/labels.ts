@@ -32,7 +32,8 @@ export function labelsOf(grid: Grid, isEmptyRow: (row: number) => boolean): Labe
 /** Whether the last of the rows read as headings holds a label alone: the first group's. */
 function isGroupRow(grid: Grid, row: number): boolean {
   const label = grid.at(row, 0);
-  if (row === 0 || label === undefined || label.columnSpan > 1 || grid.words(row, 0) === '') return false;
+  if (row === 0 || label === undefined || label.columnSpan > 1) return false;
+  if (grid.words(row, 0) === '') return false;
   return range(1, grid.table.columnCount).every((column) => grid.words(row, column) === '');
 }
 

@@ -1,4 +1,4 @@
-import type { Cell, Mark, Span, Table } from '../../model/index.ts';
+import { type Cell, indexAt, type Mark, quote, type Span, type Table } from '../../model/index.ts';
 import type { Definitions } from '../definitions.ts';
 import { lex } from '../lex.ts';
 import type { NumberStyle } from '../number.ts';
@@ -25,6 +25,8 @@ export interface Sheet {
   readonly itemsOf: (cell: Cell) => readonly Item[];
   readonly caption: Heading;
   readonly notes: Heading;
+  /** What the notes say, by the raised mark before each: "b" for "ᵇ Mean difference". */
+  readonly notesByMark: () => ReadonlyMap<string, Heading>;
   readonly context: TableContext;
   /** Whether any number of the table is negative, so that it holds no ratios alone. */
   readonly hasNegative: () => boolean;
@@ -55,8 +57,41 @@ export function sheetOf(table: Table, context: TableContext): Sheet {
     itemsOf,
     caption: headingOf(table.caption === undefined ? [] : read(table.caption)),
     notes: headingOf(table.notes.flatMap(read)),
+    notesByMark: once(() => notesByMark(table, context, read)),
     context,
     hasNegative: () => table.cells.some((cell) => itemsOf(cell).some((item) =>
       item.kind === 'number' && item.printed.value < 0)),
   };
+}
+
+/** Each mark in the notes begins what is said of the cells that bear it. */
+function notesByMark(
+  { notes }: Table,
+  { text, marks }: TableContext,
+  read: (span: Span) => readonly Item[],
+): ReadonlyMap<string, Heading> {
+  const byMark = new Map<string, Heading>();
+  for (const { start, end } of notes) {
+    const own = marksWithin(marks, { start, end });
+    own.forEach(({ span }, at) => {
+      const said = { start: span.end, end: own[at + 1]?.span.start ?? end };
+      byMark.set(quote(text, span).trim(), headingOf(read(said)));
+    });
+  }
+  return byMark;
+}
+
+function marksWithin(marks: readonly Mark[], { start, end }: Span): readonly Mark[] {
+  const own: Mark[] = [];
+  for (let at = Math.max(0, indexAt(marks, start)); at < marks.length; at++) {
+    const mark = marks[at] as Mark;
+    if (mark.span.start >= end) break;
+    if (mark.span.start >= start) own.push(mark);
+  }
+  return own;
+}
+
+function once<Value>(make: () => Value): () => Value {
+  let made: Value | undefined;
+  return () => (made ??= make());
 }

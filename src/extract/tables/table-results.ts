@@ -1,5 +1,5 @@
 import {
-  type Cell, cover, type Inheritable, type PValue, type Result,
+  type Cell, cover, indexAt, type Inheritable, type Mark, type PValue, quote, type Result,
 } from '../../model/index.ts';
 import type { Item } from '../parse/item.ts';
 import { A_RATIO, AN_AMOUNT, fitsNumbers } from '../resolve/naming.ts';
@@ -252,7 +252,10 @@ function namingOf(
   }
   if (value.estimate === undefined) return undefined;
   if (isOfTheModel(sheet, entry)) return AN_AMOUNT;
+  const noted = noteOn(sheet, entry.cell)?.names.find(({ firm }) => firm);
+  if (noted !== undefined && fitsNumbers(noted, value)) return noted;
   if (over !== undefined) return over;
+  if (heading?.spread && heading.label === undefined) return undefined;
   if (heading?.plain) return AN_AMOUNT;
   const beside = nameFor(margin, entry);
   if (beside !== undefined) return beside;
@@ -265,6 +268,25 @@ function namingOf(
   const announced = heading?.label ?? caption.label ?? notes.label;
   if (announced === undefined) return undefined;
   return sheet.hasNegative() ? AN_AMOUNT : (context.customs.naming ?? AN_AMOUNT);
+}
+
+/**
+ * What the note says that a cell's mark points to, where it names a quantity.
+ *
+ * ```
+ * 0.19 (0.07 to 0.31)ᵇ     ᵇ Mean difference.
+ *                    ^     ^^^^^^^^^^^^^^^^^
+ * ```
+ */
+function noteOn({ context, notesByMark }: Sheet, { span }: Cell): Heading | undefined {
+  if (notesByMark().size === 0) return undefined;
+  for (let at = Math.max(0, indexAt(context.marks, span.start)); at < context.marks.length; at++) {
+    const mark = context.marks[at] as Mark;
+    if (mark.span.start >= span.end) return undefined;
+    const note = mark.span.start < span.start ? undefined : notesByMark().get(quote(context.text, mark.span).trim());
+    if (note !== undefined) return note;
+  }
+  return undefined;
 }
 
 /** Rows that tell of the model as a whole; its intercept is no ratio of anything either. */
@@ -313,7 +335,7 @@ function makeResult(
   const { value, cell, column } = entry;
   const { labels, caption, notes, context, grid } = sheet;
   const heading = inForce[column];
-  const stated = heading?.label?.level ?? inForce[column + 1]?.label?.level
+  const stated = heading?.label?.level ?? levelInMargin(sheet, row) ?? inForce[column + 1]?.label?.level
     ?? inForce.find(({ label }) => label?.level !== undefined)?.label?.level;
   const level = stated ?? caption.label?.level ?? notes.label?.level ?? context.customs.level;
   const p = value.p?.value ?? pBeside(sheet, row, entry, inForce, placed);
@@ -334,6 +356,12 @@ function makeResult(
     cell: { table: grid.table, cell, row: labels.row(row), column: labels.column(column) },
     about: { term: labels.row(row) },
   });
+}
+
+/** The level that the label of a row states, or that of the row below which holds its intervals. */
+function levelInMargin(sheet: Sheet, row: number): number | undefined {
+  const own = headingOf(labelItems(sheet, row)).label?.level;
+  return own ?? (continuesBelow(sheet, row) ? headingOf(labelItems(sheet, row + 1)).label?.level : undefined);
 }
 
 /**

@@ -7,13 +7,16 @@
  *
  *   > The adjusted hazard ratio for death was 0.72 (95% CI, 0.58 to 0.98).
  *
+ *   - reads "0.72 (95% CI, 0.58 to 0.98)" as HR 0.72, 0.58 to 0.98 at 95%, adjusted
  *   - interval-symmetry flags "0.72 (95% CI, 0.58 to 0.98)", expecting 0.75
+ *
+ * fixtures/cases/README.md tells how a line after "-" is written.
  */
 
-/** What a rule is to do about some words: the four verbs of a case file. */
+/** What a rule is to do about some words: the four verbs of a line on a rule. */
 export type Verb = 'flags' | 'accepts' | 'cannot judge' | 'is silent on';
 
-/** One line after `-`: a rule, what it is to do, the words, a number worked out by hand. */
+/** A line on a rule: what it is to do, the words, a number worked out by hand. */
 export interface Expectation {
   readonly rule: string;
   readonly verb: Verb;
@@ -22,12 +25,26 @@ export interface Expectation {
   readonly expecting?: string;
 }
 
+/** What is to be found in some words: the three verbs of a line on reading. */
+export type Sense = 'reads' | 'counts' | 'hears';
+
+/**
+ * A line on what is read out of some words. `as` holds its parts in the order
+ * written, "OR 1.59" and "p = 0.03"; none where nothing is to be found there.
+ */
+export interface Found {
+  readonly sense: Sense;
+  readonly words: string;
+  readonly as: readonly string[];
+}
+
 /** A case: its heading, the text in question, and what each rule should do. */
 export interface Case {
   readonly heading: string;
   readonly note: string;
   readonly text: string;
   readonly expectations: readonly Expectation[];
+  readonly found: readonly Found[];
 }
 
 const EXPECTATION =
@@ -60,8 +77,58 @@ function parseCase(part: string): Case {
   if (stray !== undefined) throw new Error(`"${heading}" has a line of no kind: ${stray}`);
   if (listed.length === 0) throw new Error(`"${heading}" expects nothing`);
   const text = quoted.map((line) => line.replace(/^> ?/, '')).join('\n');
-  return { heading, note, text, expectations: listed.map(parseExpectation) };
+  const [found, rest] = [listed.flatMap(parseFound), listed.filter((line) => !isOfFinding(line))];
+  return { heading, note, text, expectations: rest.map(parseExpectation), found };
 }
+
+const FOUND: readonly (readonly [Sense, RegExp])[] = [
+  ['reads', /^- reads (nothing) in "(.+)"$/],
+  ['reads', /^- reads "(.+?)" as (.+)$/],
+  ['counts', /^- counts (nothing) in "(.+)"$/],
+  ['counts', /^- counts "(.+?)" as (.+)$/],
+  ['hears', /^- hears (nothing) of "(.+)"$/],
+  ['hears', /^- hears of "(.+?)" that it is (.+)$/],
+];
+
+function isOfFinding(line: string): boolean {
+  return /^- (?:reads|counts|hears) /.test(line);
+}
+
+function parseFound(line: string): readonly Found[] {
+  if (!isOfFinding(line)) return [];
+  for (const [sense, pattern] of FOUND) {
+    const [, first, second] = line.match(pattern) ?? [];
+    if (first === undefined || second === undefined) continue;
+    if (first === 'nothing') return [{ sense, words: second, as: [] }];
+    const as = second.match(/(?:[^,"]|"[^"]*")+/g)?.map((part) => part.trim()) ?? [];
+    const strange = as.find((part) => !PARTS[sense].test(part));
+    if (strange === undefined) return [{ sense, words: first, as }];
+    throw new Error(`"${strange}" cannot be understood in this line: ${line}`);
+  }
+  throw new Error(`this line cannot be understood: ${line}`);
+}
+
+const NUMBER = String.raw`[-+]?(?:\d*\.?\d+(?:e-?\d+)?|∞)%?`;
+
+/** The parts that a line may hold, each in the one way it may be written. */
+const PARTS: Readonly<Record<Sense, RegExp>> = {
+  reads: new RegExp(
+    [
+      `[A-Za-z][A-Za-z-]*(?: ${NUMBER})?`,
+      `(?:credible )?${NUMBER} to ${NUMBER}(?: at [\\d.]+%)?`,
+      `(?:one-sided |two-sided )?p(?: for (?:trend|interaction|heterogeneity)| of the factor)? `
+        + `(?:=|<|<=|>|>=) ${NUMBER}`,
+      '(?:outcome|term|comparison|unit|row|column) "[^"]+"',
+      `SE ${NUMBER}|df ${NUMBER}(?: and ${NUMBER})?`,
+    ]
+      .map((part) => `^(?:${part})$`)
+      .join('|'),
+  ),
+  counts: new RegExp(`^(?:${NUMBER}(?: of ${NUMBER})?)$`),
+  hears: new RegExp(
+    '^(?:(?:not )?significant|up|down|[\\d.]+ times' + '|in (?:odds|hazard|rate|risk|prevalence))$',
+  ),
+};
 
 function parseExpectation(line: string): Expectation {
   const [, rule, verb, words, expecting] = line.match(EXPECTATION) ?? [];
@@ -72,6 +139,7 @@ function parseExpectation(line: string): Expectation {
 }
 
 function isVerb(verb: string | undefined): verb is Verb {
-  return verb === 'flags' || verb === 'accepts' || verb === 'cannot judge'
-    || verb === 'is silent on';
+  return (
+    verb === 'flags' || verb === 'accepts' || verb === 'cannot judge' || verb === 'is silent on'
+  );
 }

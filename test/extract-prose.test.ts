@@ -162,7 +162,7 @@ describe('claims', () => {
     ['Tarring increased the odds of cough by 59% (OR 1.59, 95% CI 1.05–2.41).',
       ['significant, implied', 'up', 'factor 1.59', 'odds']],
     ['Tarrers were twice as likely to cough (OR 2.0, 95% CI 1.2–3.3).',
-      ['significant, implied', 'factor 2.00', 'risk']],
+      ['significant, implied', 'up', 'factor 2.00', 'risk']],
     ['Survival was longer (HR 0.70, 95% CI 0.52–0.94).', ['significant, implied', 'down']],
     ['The HR was 0.88 (95% CI 0.69–1.12) but was not statistically significant (P = .29).',
       ['not significant, stated']],

@@ -1,10 +1,10 @@
-import type { PDFDocumentProxy } from 'pdfjs-dist';
+import type * as PdfJs from 'pdfjs-dist';
 import { ReadError } from '../read-error.ts';
 import type { PdfHost } from './pdf-host.ts';
 
 /** An opened PDF, to be closed after reading. */
 export interface OpenPdf {
-  readonly document: PDFDocumentProxy;
+  readonly document: PdfJs.PDFDocumentProxy;
   readonly close: () => Promise<void>;
 }
 
@@ -17,9 +17,9 @@ const DAMAGED =
 
 /** Opens a PDF with everything off that text does not need. Throws `ReadError`. */
 export async function openPdf(bytes: Uint8Array, host: PdfHost): Promise<OpenPdf> {
-  const pdfjs = await host.load();
+  const pdfjs = (await host.load()) as Pick<typeof PdfJs, 'getDocument'>;
   const task = pdfjs.getDocument({
-    data: bytes.slice(), // pdf.js takes the array away from its owner
+    data: new Uint8Array(bytes), // a copy, and a plain one: pdf.js takes the array away from its owner
     verbosity: 0,
     isEvalSupported: false,
     enableXfa: false,

@@ -65,8 +65,21 @@ function eventShares(text: string, tokens: readonly Token[], at: number): readon
   let end = at;
   while (end > 0 && AUXILIARIES.has(tokens[end - 1]?.word ?? '')) end--;
   if (end === at && tokens[at]?.word !== 'occurred') return [];
-  const subject = subjectBefore(tokens, end);
+  const subject = subjectBefore(tokens, beforeTime(tokens, end));
   return subject === undefined ? [] : sharesBehind(tokens, at + 1, wordsAt(text, subject));
+}
+
+const TIME_AND_PLACE = new Set(['at', 'by', 'within', 'after', 'during', 'in', 'over']);
+
+// response at 12 weeks was common
+//          ^
+function beforeTime(tokens: readonly Token[], end: number): number {
+  for (let at = end - 1; at > 0 && end - at < 5; at--) {
+    const { kind, word } = tokens[at] as Token;
+    if (TIME_AND_PLACE.has(word)) return at;
+    if (kind !== 'word' && kind !== 'number') break;
+  }
+  return end;
 }
 
 /** The words right before a verb, back to where the clause begins. */

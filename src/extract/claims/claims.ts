@@ -14,8 +14,8 @@ import { sizeIn } from './size.ts';
  */
 export function findClaims(reaches: readonly Reach[]): readonly Claim[] {
   return bySentence(reaches).flatMap((sentence) => {
-    const significance = throughList(sentence, significanceOf, significanceBehind);
-    const direction = throughList(withListWords(sentence), directionOf, directionBehind);
+    const significance = throughList(sentence, significanceOf, significanceBefore, significanceBehind);
+    const direction = throughList(withListWords(sentence), directionOf, directionBefore, directionBehind);
     return sentence.flatMap((reach, index) =>
       claimsOf(reach, significance[index], direction[index]),
     );
@@ -43,12 +43,15 @@ function bySentence(reaches: readonly Reach[]): readonly (readonly Reach[])[] {
 function throughList<Said>(
   sentence: readonly Reach[],
   own: (reach: Reach) => Said | undefined,
+  before: (reach: Reach) => Said | undefined,
   behind: (reach: Reach) => Said | undefined,
 ): readonly (Said | undefined)[] {
-  const answers = sentence.map(own);
-  for (let at = 1; at < answers.length; at++) {
-    if (goesOn(sentence[at] as Reach)) answers[at] ??= answers[at - 1];
-  }
+  let shared: Said | undefined;
+  const answers = sentence.map((reach) => {
+    if (!goesOn(reach)) shared = undefined;
+    shared = before(reach) ?? shared;
+    return own(reach) ?? shared;
+  });
   const trailing = sentence.at(-1) === undefined ? undefined : behind(sentence.at(-1) as Reach);
   for (let at = answers.length - 1; at >= 0; at--) {
     answers[at] ??= trailing;
@@ -80,20 +83,22 @@ function withListWords(sentence: readonly Reach[]): readonly Reach[] {
 const LONGEST_LIST = 200;
 
 /** Words behind a result outweigh those before it only where they state significance. */
-function significanceOf({ before, behind }: Reach): SaidOfSignificance | undefined {
-  const own = saidBefore(
-    before,
-    (clause, turned) => significanceIn(clause) ?? elliptic(clause, turned),
-  );
-  const after = significanceIn(firstClause(behind));
+function significanceOf(reach: Reach): SaidOfSignificance | undefined {
+  const own = significanceBefore(reach);
+  const after = significanceBehind(reach);
   return after?.manner === 'stated' && own?.manner !== 'stated' ? after : (own ?? after);
 }
 
+const significanceBefore = ({ before }: Reach) =>
+  saidBefore(before, (clause, turned) => significanceIn(clause) ?? elliptic(clause, turned));
+
 const significanceBehind = ({ behind }: Reach) => significanceIn(firstClause(behind));
 
-const directionOf = ({ before, behind, result }: Reach): SaidOfDirection | undefined =>
-  saidBefore(before, (clause) => directionIn(clause, result))
-  ?? directionIn(firstClause(behind), result);
+const directionOf = (reach: Reach): SaidOfDirection | undefined =>
+  directionBefore(reach) ?? directionBehind(reach);
+
+const directionBefore = ({ before, result }: Reach) =>
+  saidBefore(before, (clause) => directionIn(clause, result));
 
 const directionBehind = ({ behind, result }: Reach) => directionIn(firstClause(behind), result);
 

@@ -29,7 +29,8 @@ const HEADINGS: readonly (readonly [Role, RegExp])[] = [
   ['t', /^t(?:[- ](?:value|statistic))?$/i],
   ['Wald', /^wald(?:\s?(?:χ2|χ²|x2|chi[- ]squared?|statistics?|test))?$/i],
   ['p', /^(?:p|sig\.?|p[- ]?values?|pr?\s?\(?>\s?\|[zt]\|\)?)$/i],
-  ['ratio', /^(?:exp\s?\(?[bβ]\)?|(?:a|c)?(?:or|hr|rr|irr)|(?:odds|hazards?|risk|rate) ratio)(?![a-z])/i],
+  ['ratio', new RegExp('^(?:exp\\s?\\(?[bβ]\\)?|[ac]?(?:or|hr|rr|irr)'
+    + '|(?:odds|hazards?|risk|rate) ratio)(?![a-z])', 'i')],
 ];
 
 /**
@@ -60,7 +61,8 @@ export function withCoefficients(sheet: Sheet, results: readonly Result[]): read
     return other === undefined ? [] : [[other, { ...result, ...other }] as const];
   }));
   const added = found.filter(({ estimate }) => !known.has(estimate.span.start));
-  return [...results.map((result) => completed.get(result as CoefficientResult) ?? result), ...added];
+  const whole = results.map((result) => completed.get(result as CoefficientResult) ?? result);
+  return [...whole, ...added];
 }
 
 /** The columns of each model, from one column of coefficients up to the next. */
@@ -111,11 +113,41 @@ function roleOf(heading: string): Role | undefined {
   return HEADINGS.find(([, pattern]) => pattern.test(plain))?.[0];
 }
 
+/** The numbers of a row that belong together, as printed. */
+interface Row {
+  readonly cell: Cell;
+  readonly estimate: Printed;
+  readonly standardError: Printed | undefined;
+  readonly statistic: CoefficientResult['statistic'];
+  readonly p: PValue | undefined;
+}
+
 function coefficientAt(
-  { grid, labels, itemsOf }: Sheet,
+  sheet: Sheet,
   row: number,
   columns: Columns,
 ): CoefficientResult | undefined {
+  const found = rowAt(sheet, row, columns);
+  if (found === undefined || found.estimate.percent) return undefined;
+  const { cell, estimate, standardError, statistic, p } = found;
+  const { grid: { table }, labels } = sheet;
+  const parts = [standardError, statistic?.printed, p].flatMap((part) => part?.span ?? []);
+  return {
+    kind: 'coefficient',
+    estimate,
+    ...(standardError === undefined ? {} : { standardError }),
+    ...(statistic === undefined ? {} : { statistic }),
+    ...(p === undefined ? {} : { p }),
+    span: cover(estimate.span, ...parts),
+    about: { term: labels.row(row) },
+    inferred: [],
+    counts: [],
+    cited: false,
+    cell: { table, cell, row: labels.row(row), column: labels.column(columns.coefficient) },
+  };
+}
+
+function rowAt({ grid, itemsOf }: Sheet, row: number, columns: Columns): Row | undefined {
   const cellAt = (column: number | undefined): Cell | undefined => {
     const cell = column === undefined ? undefined : grid.at(row, column);
     return cell?.row === row && cell.columnSpan === 1 ? cell : undefined;
@@ -128,27 +160,15 @@ function coefficientAt(
   if (cell === undefined) return undefined;
   const pair = columns.withError ? numberWithError(itemsOf(cell)) : undefined;
   const estimate = columns.withError ? pair?.estimate : soleNumber(itemsOf(cell));
-  if (estimate === undefined || estimate.percent) return undefined;
-  const standardError = pair?.error ?? numberAt(columns.error);
-  const statistic = numberAt(columns.statistic?.column);
+  if (estimate === undefined) return undefined;
+  const printed = numberAt(columns.statistic?.column);
   const beside = cellAt(columns.p);
-  const p = beside === undefined ? undefined : pIn(itemsOf(beside));
-  const parts = [standardError, statistic, p].flatMap((part) => part?.span ?? []);
   return {
-    kind: 'coefficient',
+    cell,
     estimate,
-    ...(standardError === undefined ? {} : { standardError }),
-    ...(statistic === undefined || columns.statistic === undefined
-      ? {} : { statistic: { of: columns.statistic.of, printed: statistic } }),
-    ...(p === undefined ? {} : { p }),
-    span: cover(estimate.span, ...parts),
-    about: { term: labels.row(row) },
-    inferred: [],
-    counts: [],
-    cited: false,
-    cell: {
-      table: grid.table, cell, row: labels.row(row), column: labels.column(columns.coefficient),
-    },
+    standardError: pair?.error ?? numberAt(columns.error),
+    statistic: columns.statistic && printed && { of: columns.statistic.of, printed },
+    p: beside === undefined ? undefined : pIn(itemsOf(beside)),
   };
 }
 

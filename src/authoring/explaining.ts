@@ -104,7 +104,8 @@ function decimalsOf(plain: string): number {
 
 function slipsInWords(slips: readonly Repair[]): string {
   const named = slips.slice(0, SLIPS_NAMED)
-    .map(({ of, slip, instead }) => `the ${NAMES[of]} ${instead} (${slip})`);
+    .map(({ of, slip, instead }) =>
+      `the ${slip === 'limits swapped' ? 'limits' : NAMES[of]} ${instead} (${slip})`);
   const more = slips.length > named.length ? ', among others' : '';
   return `One slip would explain it, for instance ${named.join(', or ')}${more}.`;
 }

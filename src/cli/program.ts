@@ -3,6 +3,7 @@ import type { Grade } from '../model/index.ts';
 import type { ExitStatus } from './exit-status.ts';
 import type { FormName } from './form.ts';
 import { CHECK_HELP, EXPLAIN_HELP, EXTRACT_HELP, PROGRAM_HELP } from './help-text.ts';
+import { addRecompute } from './recompute-line.ts';
 import type { CheckOptions, ReportOptions, Shell } from './report-command.ts';
 import { version } from './version.ts';
 
@@ -26,6 +27,7 @@ export function programFor(shell: Shell, finish: Finish): Command {
     .configureOutput({ outputError: (message, write) => write(asSentence(message)) });
   addCheck(program, shell, finish);
   addExtract(program, shell, finish);
+  addRecompute(program, shell, finish);
   addExplain(program, shell, finish);
   return program;
 }

@@ -36,6 +36,7 @@ export function coefficientRow(
   const ratio = exponentials(b);
   if (standardError === undefined) return { ratio };
   const s = unrounded(standardError);
+  if (s.high < 0) return absence('a standard error cannot be negative');
   const error = { low: Math.max(0, s.low), high: s.high };
   const z = quotients(magnitudes(b), error);
   return {

@@ -82,13 +82,22 @@ export function longestArm(v: number, reach: number): number {
   return solved(v * reach, -1) / reach;
 }
 
+/** Beyond this a square has no place; nothing printed comes near it. */
+const LARGEST = 1e150;
+
+/** Below the root, where a step of Newton's goes too far by little: ln(1 + y²/2) for large y. */
+function startOfShort(y: number): number {
+  return y > 12 ? Math.log1p((y * y) / 2) : y / (1 + y / 12);
+}
+
 /**
  * The x > 0 with 2(e^±x − 1 ∓ x) = y², by Newton's method from a start on the side
  * from which it converges without overshooting.
  */
-function solved(y: number, side: 1 | -1): number {
-  if (!(y > 0) || y === Infinity) return Math.max(0, y);
-  let x = side === 1 ? y / (1 + y / 12) : y + (y * y) / 2;
+function solved(distance: number, side: 1 | -1): number {
+  if (!(distance > 0) || distance === Infinity) return Math.max(0, distance);
+  const y = Math.min(distance, LARGEST);
+  let x = side === 1 ? startOfShort(y) : y + (y * y) / 2;
   for (let step = 0; step < 60; step++) {
     const slope = 2 * side * Math.expm1(side * x);
     const change = (doubledExcess(side * x) - y * y) / slope;

@@ -50,10 +50,13 @@ export function studentReading(part: StudentPart, usual: Reading, degrees: numbe
   };
 }
 
+/** Quantiles go no further out; t plays no part in p-values that small. */
+const SMALLEST_TAIL = 1e-300;
+
 function studentStatistic(upper: number, degrees: number): number {
   if (upper <= 0) return Infinity;
   if (upper >= 1) return -Infinity;
-  return orThrow(studentQuantile(upper, degrees));
+  return orThrow(studentQuantile(Math.max(upper, SMALLEST_TAIL), degrees));
 }
 
 function orThrow(answer: Maybe<number>): number {

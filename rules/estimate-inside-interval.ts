@@ -9,6 +9,7 @@ import {
   type Interval,
   limitsInOrder,
   limitsInWords,
+  neighbourInWords,
   overlap,
   type Printed,
   type PValue,
@@ -40,7 +41,8 @@ export default defineRule({
   reads: 'ratio',
   marks: ({ estimate, interval }) => [estimate, interval?.lower, interval?.upper],
 
-  judge({ estimate, interval, p }) {
+  judge(result, reading) {
+    const { estimate, interval, p } = result;
     if (estimate === undefined || interval === undefined) return undefined;
     if (estimate.value < 0 || !limitsInOrder(interval)) return undefined;
     if (insideLimits(estimate, interval)) return agrees;
@@ -55,7 +57,10 @@ export default defineRule({
           `${estimate.plain} is ${beyond(estimate, interval)}, as is all that it stands for: `
             + rangeInWords(unrounded(estimate), estimate.decimals + 1),
         ],
-        explanations: explanationsOf({ estimate, interval, p }),
+        explanations: [
+          ...neighbourInWords(reading, result),
+          ...explanationsOf({ estimate, interval, p }),
+        ],
       },
     );
   },

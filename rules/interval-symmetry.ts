@@ -14,12 +14,14 @@ import {
   type Interval,
   limitsInOrder,
   limitsInWords,
+  neighbourInWords,
   otherIntervalNamed,
   othersInWords,
   type Printed,
   rangeInWords,
   type RatioResult,
   sharesLeanOfTable,
+  standsOutOfTable,
   unrounded,
   type Verdict,
 } from '../src/authoring.ts';
@@ -62,16 +64,20 @@ export default defineRule({
     const found = agreementOf(estimate, interval, contrast);
     switch (found.outcome) {
       case 'within rounding':
-      case 'within another standard method':
         return agrees;
+      case 'within another standard method':
+        return standsOutOfTable(reading, result) && otherIntervalNamed(reading, result) === undefined
+          ? disagreesOn(result, estimate, interval, contrast, neighbourInWords(reading, result))
+          : agrees;
       case 'cannot tell':
         return cannotTell(found.because);
       case 'neither': {
-        if (contrast === 'binary' && leansLittle(estimate, interval)) return agrees;
+        if (contrast === 'binary' && leansLittle(estimate, interval)
+          && !standsOutOfTable(reading, result)) return agrees;
         if (sharesLeanOfTable(reading, result)) return cannotTell(LOPSIDED_TABLE);
         const named = otherIntervalNamed(reading, result);
         return named === undefined
-          ? disagreesOn(result, estimate, interval, contrast)
+          ? disagreesOn(result, estimate, interval, contrast, neighbourInWords(reading, result))
           : cannotTell(`the text speaks of “${named}” here, and such an interval need not be `
             + 'symmetric');
       }
@@ -128,6 +134,7 @@ function disagreesOn(
   estimate: Printed,
   interval: Interval,
   contrast: Contrast,
+  neighbour: readonly string[],
 ): Verdict {
   const { lower, upper } = interval;
   const middle = impliedEstimate(interval);
@@ -140,7 +147,10 @@ function disagreesOn(
         `√(${lower.plain} × ${upper.plain}) = ${product}, and ${estimate.plain} is printed`,
         ...othersInWords(agreementOf(estimate, interval, contrast, p), { estimate, interval }),
       ],
-      explanations: explanationsInWords({ estimate, interval, witness: p }, contrast),
+      explanations: [
+        ...neighbour,
+        ...explanationsInWords({ estimate, interval, witness: p }, contrast),
+      ],
     },
   );
 }

@@ -2,6 +2,7 @@ import {
   agrees,
   cannotTell,
   type Claim,
+  COMMON_FROM,
   cover,
   defineManuscriptRule,
   disagrees,
@@ -10,6 +11,7 @@ import {
   type Judgement,
   percentInWords,
   type Prevalence,
+  prevalenceFor,
   type Printed,
   quote,
   type Range,
@@ -44,11 +46,12 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
+    const design = reading.manuscript.text.match(SAMPLED_BY_OUTCOME)?.[0];
     return reading.findings.claims.flatMap((claim): readonly Judgement[] => {
       if (!isOfRisk(claim) || claim.of?.kind !== 'ratio') return [];
       const { measure, estimate, span } = claim.of;
       if (!isOdds(measure) || estimate === undefined || estimate.value <= 0) return [];
-      const verdict = judgeWords(claim, claim.of, estimate, reading);
+      const verdict = judgeWords(claim, claim.of, estimate, reading, design);
       const marks = [claim.span, ...spansOf([estimate])];
       return [{ verdict, span: cover(claim.span, span), marks, result: claim.of }];
     });
@@ -86,8 +89,8 @@ export default defineManuscriptRule({
   ],
 });
 
-/** The share from which an outcome is called common: the 10% of Zhang and Yu. */
-const COMMON = 0.1;
+/** Designs in which an odds ratio may stand for a ratio of rates or risks. */
+const SAMPLED_BY_OUTCOME = /\bcase[-‐–\s](?:control|cohort)\b/i;
 
 function isOfRisk(claim: Claim): boolean {
   return (claim.kind === 'size' || claim.kind === 'scale') && claim.scale === 'risk';
@@ -102,13 +105,13 @@ function judgeWords(
   result: RatioResult,
   estimate: Printed,
   reading: Reading,
+  design: string | undefined,
 ): Verdict {
   const prevalence = prevalenceFor(claim, result, reading);
   if (prevalence === undefined) {
     return cannotTell('the text does not say how common this outcome is');
   }
-  if (prevalence.share < COMMON) return agrees;
-  const design = reading.manuscript.text.match(/\bcase[-‐–\s](?:control|cohort)\b/i)?.[0];
+  if (prevalence.share < COMMON_FROM) return agrees;
   if (design !== undefined) {
     return cannotTell(`the text speaks of a ${design.toLowerCase()} design, in which the odds `
       + 'ratio may stand for a ratio of rates or risks');
@@ -129,42 +132,6 @@ function isSmall(claim: Claim, estimate: Printed, implied: Range): boolean {
   return claim.kind === 'scale'
     && Math.abs(Math.log(estimate.value)) < FURTHER_FROM_ONE * Math.abs(Math.log(middle));
 }
-
-/**
- * The share that tells how common the outcome of this result is: one whose
- * outcome shares a word with the claim's sentence, or the only one there is that
- * names no outcome. Of an unexposed group rather than of everyone.
- */
-function prevalenceFor(
-  { sentence }: Claim,
-  { about }: RatioResult,
-  { manuscript, findings }: Reading,
-): Prevalence | undefined {
-  const said = `${quote(manuscript.text, sentence)} ${about.outcome ?? ''}`.toLowerCase();
-  const fitting = findings.prevalences.filter(({ outcome }) =>
-    outcome === undefined ? findings.prevalences.length === 1 : sharesAWord(outcome, said));
-  return fitting.find(({ group }) => group === 'unexposed') ?? fitting[0];
-}
-
-/** Whether a word of the outcome, by its first letters, begins a word of the sentence. */
-function sharesAWord(outcome: string, sentence: string): boolean {
-  const spoken = sentence.match(/\p{L}{4,}/gu) ?? [];
-  return (outcome.toLowerCase().match(/\p{L}{4,}/gu) ?? [])
-    .filter((word) => !EMPTY_WORDS.has(word))
-    .some((word) => spoken.some((other) => other.startsWith(stemOf(word))));
-}
-
-/** The first letters of a word without a plural: "falls" and "falling" begin with "fall". */
-function stemOf(word: string): string {
-  return word.replace(/s$/, '').slice(0, 5);
-}
-
-/** Words that outcomes share without being the same outcome. */
-const EMPTY_WORDS = new Set([
-  'among', 'with', 'history', 'level', 'levels', 'increased', 'higher', 'report', 'reported',
-  'prevalence', 'overall', 'total', 'risk', 'rate', 'incidence', 'patients',
-  'women', 'children', 'adults', 'their', 'from', 'during', 'after', 'before', 'between',
-]);
 
 function disagreesOn(
   claim: Claim,
@@ -196,6 +163,9 @@ function disagreesOn(
   );
 }
 
+/** A risk ratio worked out from a share is no finer than this. */
+const MOST_DECIMALS = 2;
+
 function shown(implied: Range, { decimals }: Printed): string {
-  return rangeInWords(implied, decimals + 1);
+  return rangeInWords(implied, Math.min(MOST_DECIMALS, decimals + 1));
 }

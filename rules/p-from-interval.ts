@@ -15,6 +15,7 @@ import {
   limitsStand,
   multiplierInWords,
   limitsInWords,
+  neighbourOfPInWords,
   otherIntervalNamed,
   otherTestNamed,
   pInWords,
@@ -62,9 +63,11 @@ export default defineRule({
     if (!isProbability(p) || !limitsStand(estimate, interval, contrast)) return undefined;
     const withoutP = agreementOf(estimate, interval, 'unknown');
     const verdict = judgeP({ estimate, interval, p, contrast, withoutP }, reading);
-    return verdict.outcome === 'disagrees' && !standsBeside(p, result)
-      ? cannotTell('the p-value stands apart from the interval and may be of something else')
-      : verdict;
+    if (verdict.outcome !== 'disagrees') return verdict;
+    const explanations = [...neighbourOfPInWords(reading, result), ...verdict.explanations];
+    return standsBeside(p, result)
+      ? { ...verdict, explanations }
+      : cannotTell('the p-value stands apart from the interval and may be of something else');
   },
 
   comment: (words, { because }) => `

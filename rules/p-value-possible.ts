@@ -41,7 +41,7 @@ export default defineManuscriptRule({
       result,
     }));
     const spans = known.map(({ p }) => p.printed.span);
-    return [...ofResults, ...loneZeros(reading, spans)];
+    return [...ofResults, ...loneZeros(reading, spans), ...loneAboveOne(reading, spans)];
   },
 
   comment: (words, { grade }) => (grade === 'contradiction' || grade === undefined
@@ -142,6 +142,25 @@ function loneZeros({ manuscript }: Reading, known: readonly Span[]): readonly Ju
     const verdict = zero(number.replace('·', '.'), /[<≤]/.test(relation));
     return [{
       verdict,
+      span: { start: match.index, end },
+      marks: [{ start: end - number.length, end }],
+    }];
+  });
+}
+
+/** A p-value above 1 that belongs to no result that was read, and ends a bracket or the text. */
+// (p = 1.2)
+//      ^^^
+const LONE_ABOVE = /(?<![\p{L}\d])[Pp](?:[ -]?values?)?\s?=\s?([1-9]\d?[.·]\d{1,3})(?=\s*(?:[);]|\.?\s*$))/gmu;
+
+function loneAboveOne({ manuscript }: Reading, known: readonly Span[]): readonly Judgement[] {
+  return [...manuscript.text.matchAll(LONE_ABOVE)].flatMap((match) => {
+    const [whole, number = ''] = match;
+    const end = match.index + whole.length;
+    const plain = number.replace('·', '.');
+    if (Number(plain) <= 1 || known.some((span) => span.start < end && match.index < span.end)) return [];
+    return [{
+      verdict: disagrees(`p cannot be above 1, and ${plain} is printed`, { working: [`${plain} > 1`] }),
       span: { start: match.index, end },
       marks: [{ start: end - number.length, end }],
     }];

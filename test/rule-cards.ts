@@ -44,5 +44,10 @@ function cardInMarkdown(rule: Rule): string {
 }
 
 function exampleInMarkdown({ text, outcome, note }: Example): string {
-  return `- “${text}” **${outcome}**: ${note}`;
+  return `- “${inOneLine(text)}” **${outcome}**: ${note}`;
+}
+
+/** A pasted table in one line: its columns parted by bars, its rows by slashes. */
+function inOneLine(text: string): string {
+  return text.replaceAll('\t', ' | ').replaceAll('\n', ' / ');
 }

@@ -9,8 +9,11 @@ import {
   riskRatioAt,
   sideOfOne,
 } from '../src/authoring.ts';
-import type { Interval, Printed, PValue } from '../src/model/index.ts';
+import { rules } from '../rules/index.ts';
+import type { Flag, Interval, Printed, PValue } from '../src/model/index.ts';
 import { unrounded } from '../src/stats/rounding.ts';
+import { checkedBy, outcomeOf, readingOf } from './reading-of.ts';
+import { recordsOf } from './records.ts';
 
 /* What rules ask of printed numbers. Values marked R were made in R 4.2.2 as shown. */
 
@@ -145,4 +148,169 @@ function printed(text: string): Printed {
     percent: false,
     span: { start: 0, end: text.length },
   };
+}
+
+/* Published and typed-out rows, taken through the whole path: a text or a table in, flags out. */
+
+describe('a published ratio in a sentence', () => {
+  const ASKED = [
+    'limits-in-order', 'estimate-inside-interval', 'interval-symmetry', 'p-from-interval',
+  ];
+
+  /** What is expected of each verdict: the rules that raise a flag. */
+  const RAISED: Readonly<Record<string, readonly string[]>> = {
+    consistent: [],
+    'unusual level': [],
+    'asymmetric within the bound': [],
+    'asymmetric beyond the bound': ['interval-symmetry'],
+    'p inconsistent': ['p-from-interval'],
+    'p inconsistent significance flip': ['p-from-interval'],
+    'arithmetic symmetry': ['interval-symmetry'],
+    'bounds swapped': ['limits-in-order'],
+  };
+
+  const records = recordsOf('printed-numbers')
+    .filter(({ kind }) => kind === 'reported_ratio_decision');
+
+  test.each(records)('$id is answered as expected', async (record) => {
+    const { estimate, ci, level, p } = record.inputs as RatioInputs;
+    const [lower = '', upper = ''] = ci;
+    const ending = p === null ? '' : `; p = ${p}`;
+    const interval = `${level * 100}% CI ${lower} to ${upper}`;
+    const text = `The odds ratio was ${estimate} (${interval}${ending}).`;
+    const reading = await readingOf(text);
+    const { flags } = checkedBy(rules.filter(({ id }) => ASKED.includes(id)), reading);
+    expect(flags.map(({ rule }) => rule)).toEqual(RAISED[String(record.expected['verdict'])]);
+  });
+});
+
+describe('a published table of ratios', () => {
+  const records = recordsOf('printed-numbers')
+    .filter(({ kind }) => kind === 'reported_ratio_table');
+
+  test.each(records)('$id: slips are flagged, and sound rows are not', async (record) => {
+    const { rows } = record.inputs as { readonly rows: readonly RatioInputs[] };
+    const expected = record.expected['rows'] as readonly { readonly judged?: string }[];
+    const text = ['Table 1. Odds', 'Term\tOR (95% CI)\tP', ...rows.map(({ estimate, ci, p }, at) =>
+      `Row ${at}\t${estimate} (${ci[0]}–${ci[1]})\t${p ?? ''}`)].join('\n');
+    const { flags } = checkedBy(rules, await readingOf(text));
+    const slips = expected.flatMap(({ judged }, at) => (judged === undefined ? [] : [`Row ${at}`]));
+    const flagged = flags.flatMap(({ result }) => result?.cell?.row ?? []);
+    expect([...new Set(flagged)]).toEqual(slips);
+  });
+});
+
+describe('a published row of coefficient, standard error, Wald, p and ratio', () => {
+  const records = recordsOf('printed-numbers').filter(({ kind }) => kind === 'b_se_wald_row');
+
+  test.each(records)('$id is answered as expected', async (record) => {
+    const { b, se, wald, p, exp_b } = record.inputs as Readonly<Record<string, string | null>>;
+    const text = ['Table 2. Logistic regression', 'Term\tB\tS.E.\tWald\tdf\tSig.\tExp(B)',
+      `Term\t${b ?? ''}\t${se ?? ''}\t${wald ?? ''}\t1\t${p ?? ''}\t${exp_b ?? ''}`].join('\n');
+    const reading = await readingOf(text);
+    const consistent = Object.entries(record.expected)
+      .every(([field, value]) => !field.endsWith('consistent') || value === true);
+    const rule = rules.find(({ id }) => id === 'coefficient-and-ratio');
+    expect(outcomeOf(rule?.judgements(reading) ?? [])).toBe(consistent ? 'agrees' : 'disagrees');
+    expect(checkedBy(rules, reading).flags).toHaveLength(consistent ? 0 : 1);
+  });
+
+  test('is flagged where any one of its numbers is another', async () => {
+    // The row 0.693, 0.210, 10.890, 0.001, 2.000 with one number changed by about a tenth or more.
+    const numbers = ['0.693', '0.210', '10.890', '1', '0.001', '2.000'];
+    const others = [
+      [0, '0.963'], [1, '0.120'], [2, '18.090'], [4, '0.100'], [5, '2.200'],
+    ] as const;
+    for (const [at, other] of others) {
+      const row = numbers.map((number, index) => (index === at ? other : number));
+      const text = 'Table 2. Relapse\nTerm\tB\tS.E.\tWald\tdf\tSig.\tExp(B)\n'
+        + `Quay\t${row.join('\t')}`;
+      const { flags } = checkedBy(rules, await readingOf(text));
+      expect(flags.map(({ rule }) => rule), row.join(' ')).toEqual(['coefficient-and-ratio']);
+    }
+  });
+});
+
+describe('published counts beside their crude odds ratio', () => {
+  const records = recordsOf('two-by-two').filter(({ kind }) => kind === 'counts_vs_printed_or');
+
+  test.each(records)('$id is answered as expected', async (record) => {
+    const { a, b, c, d, printed_or, printed_ci } = record.inputs as CountInputs;
+    const text = ['Table 3. Crude odds', 'Level\tCases\tControls\tCrude OR (95% CI)',
+      `High\t${a}\t${b}\t${printed_or} (${printed_ci[0]}–${printed_ci[1]})`,
+      `Low\t${c}\t${d}\t1.00`].join('\n');
+    const rule = rules.find(({ id }) => id === 'crude-ratio-from-counts');
+    const reading = await readingOf(text);
+    const wanted = record.expected['or_consistent'] === true ? 'agrees' : 'disagrees';
+    expect(outcomeOf(rule?.judgements(reading) ?? [])).toBe(wanted);
+    expect(checkedBy(rules, reading).flags).toHaveLength(wanted === 'agrees' ? 0 : 1);
+  });
+});
+
+describe('published percentages of counts', () => {
+  const records = recordsOf('proportions').filter(({ kind }) => kind === 'percent_of_count');
+
+  test.each(records)('$id is answered as expected', async (record) => {
+    const { count, denominator, printed_percent } = record.inputs as PercentInputs;
+    const share = `${count} of ${denominator} residents (${printed_percent}%)`;
+    const text = `Falls were reported by ${share}.`;
+    const [flag, ...others] = await flagsOn(text);
+    expect(others).toEqual([]);
+    if (record.expected['consistent'] === true) expect(flag).toBeUndefined();
+    else {
+      expect(flag?.rule).toBe('percent-of-count');
+      expect(flag?.grade).toBe(
+        record.expected['explained_by_truncation'] === true ? 'discrepancy' : 'contradiction');
+    }
+  });
+});
+
+describe('published parts and their total', () => {
+  const records = recordsOf('proportions').filter(({ kind }) => kind === 'parts_vs_total');
+
+  const WANTED: Readonly<Record<string, string>> = {
+    adds_up: 'agrees',
+    off_by_rounding: 'agrees',
+    excludes_missing: 'cannot tell',
+  };
+
+  test.each(records)('$id is answered as expected', async (record) => {
+    const { parts, total } = record.inputs as SumInputs;
+    const rows = parts.map((part, at) => `Group ${at}\t${part}`);
+    const text = ['Table 4. Numbers', 'Group\tNumber', ...rows, `Total\t${total}`].join('\n');
+    const rule = rules.find(({ id }) => id === 'parts-and-total');
+    const outcome = outcomeOf(rule?.judgements(await readingOf(text)) ?? []);
+    expect(outcome).toBe(WANTED[String(record.expected['verdict'])]);
+  });
+});
+
+interface RatioInputs {
+  readonly estimate: string;
+  readonly ci: readonly string[];
+  readonly level: number;
+  readonly p: string | null;
+}
+
+interface CountInputs {
+  readonly a: number;
+  readonly b: number;
+  readonly c: number;
+  readonly d: number;
+  readonly printed_or: string;
+  readonly printed_ci: readonly string[];
+}
+
+interface SumInputs {
+  readonly parts: readonly number[];
+  readonly total: number;
+}
+
+interface PercentInputs {
+  readonly count: number;
+  readonly denominator: number;
+  readonly printed_percent: string;
+}
+
+async function flagsOn(text: string): Promise<readonly Flag[]> {
+  return checkedBy(rules, await readingOf(text)).flags;
 }

@@ -14,6 +14,7 @@ interface View {
   readonly intervals: TableIntervals | undefined;
   /** The middle of the rows' asymmetries, |ln A|. */
   readonly usual: number;
+  readonly rows: number;
 }
 
 /** Tables looked at once, for all their rows ask the same. */
@@ -37,6 +38,29 @@ export function sharesLeanOfTable(reading: Reading, { cell, estimate, interval }
   return leastAsymmetry(estimate, interval) <= STANDS_OUT * usual;
 }
 
+/** So many rows, and so many of them symmetric, there must be before one that leans stands out. */
+const FEWEST_SYMMETRIC = 10;
+const MOST_SYMMETRIC = 0.9;
+
+/** A row leans more than a hair, by rounding twice or so, from here on: |ln A|. */
+const MORE_THAN_A_HAIR = 0.08;
+
+/**
+ * Whether nearly all intervals of a result's table are symmetric on the log scale, so that
+ * they are Wald's, and this one is not. What another method might explain elsewhere is then
+ * no explanation: one method made the table.
+ */
+export function standsOutOfTable(
+  reading: Reading,
+  { cell, estimate, interval }: RatioResult,
+): boolean {
+  if (cell === undefined || estimate === undefined || interval === undefined) return false;
+  const { intervals, rows } = viewOf(reading, cell.table);
+  return intervals !== undefined && rows >= FEWEST_SYMMETRIC
+    && 1 - intervals.asymmetric >= MOST_SYMMETRIC
+    && leastAsymmetry(estimate, interval) >= MORE_THAN_A_HAIR;
+}
+
 function viewOf({ findings }: Reading, table: Table): View {
   const known = VIEWS.get(table);
   if (known !== undefined) return known;
@@ -48,6 +72,7 @@ function viewOf({ findings }: Reading, table: Table): View {
       : tableIntervals(rows.map(({ estimate, interval }) =>
         reportedNumbers(estimate, interval, undefined))),
     usual: leans[leans.length >> 1] ?? 0,
+    rows: rows.length,
   };
   VIEWS.set(table, view);
   return view;

@@ -71,6 +71,8 @@ export interface CoefficientResult extends Reported {
   readonly kind: 'coefficient';
   readonly estimate: Printed;
   readonly standardError?: Printed;
+  /** The coefficient over its standard error (z, t), or the square of that (Wald), as printed. */
+  readonly statistic?: { readonly of: 'z' | 't' | 'Wald'; readonly printed: Printed };
 }
 
 /** A difference of risks, of means, or of standardised means. */

@@ -9,6 +9,7 @@ import {
   disagrees,
   distanceInZ,
   explanationsInWords,
+  hasPOfItsRow,
   type Interval,
   impliedP,
   levelOf,
@@ -65,7 +66,7 @@ export default defineRule({
     const verdict = judgeP({ estimate, interval, p, contrast, withoutP }, reading);
     if (verdict.outcome !== 'disagrees') return verdict;
     const explanations = [...neighbourOfPInWords(reading, result), ...verdict.explanations];
-    return standsBeside(p, result)
+    return standsBeside(p, result) || hasPOfItsRow(reading, result)
       ? { ...verdict, explanations }
       : cannotTell('the p-value stands apart from the interval and may be of something else');
   },

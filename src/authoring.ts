@@ -15,6 +15,7 @@ export * from './authoring/named-numbers.ts';
 export * from './authoring/numbers-in-text.ts';
 export * from './authoring/prevalence.ts';
 export * from './authoring/neighbours.ts';
+export * from './authoring/p-column.ts';
 export * from './authoring/printed-numbers.ts';
 export * from './authoring/row-mates.ts';
 export * from './authoring/printed-twice.ts';

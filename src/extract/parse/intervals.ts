@@ -154,7 +154,15 @@ function estimateBehindInterval(
     if (kind === 'number' || kind === 'name') return undefined;
   }
   const at = items[end + 2]?.kind === 'number' ? end + 2 : end + 3;
-  return items[at]?.kind === 'number' && pairAt(items, at) === undefined ? at : undefined;
+  if (items[at]?.kind !== 'number' || pairAt(items, at) !== undefined) return undefined;
+  return hasOwnInterval(items, at) ? undefined : at;
+}
+
+// (95% CI 40 to 75; RR 0.39, 95% CI 0.25 to 0.60)
+//                      ^^^^
+function hasOwnInterval(items: readonly Item[], at: number): boolean {
+  const isAnnounced = items.slice(at + 1, at + 3).some(({ kind }) => kind === 'label');
+  return isAnnounced || pairBehind(items, at) !== undefined;
 }
 
 function draftOf(

@@ -1,3 +1,4 @@
+import type { Printed } from '../../model/index.ts';
 import type { Draft } from '../parse/draft.ts';
 import { nameRightBefore } from '../parse/intervals.ts';
 import type { Item, NameItem } from '../parse/item.ts';
@@ -77,7 +78,12 @@ export function fitsNumbers(
     return estimate?.percent === true || (limits?.upper.value ?? Infinity) <= 1;
   }
   if (quantity.kind !== 'ratio') return true;
-  return !((estimate?.value ?? 0) < 0 || (limits?.lower.value ?? 0) < 0);
+  return !(isNegative(estimate) || isNegative(limits?.lower));
+}
+
+/** "−0.0" counts: it stands for a number below zero. */
+function isNegative(printed: Printed | undefined): boolean {
+  return printed !== undefined && (printed.value < 0 || Object.is(printed.value, -0));
 }
 
 // the differences in density between the groups were 1.33 (95% CI 0.37-2.30)

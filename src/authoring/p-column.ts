@@ -1,11 +1,11 @@
 import { contains, type RatioResult, type Reading, type Table } from '../model/index.ts';
-import { agreementOf } from './arithmetic.ts';
+import { agreementOf, limitsStand } from './arithmetic.ts';
 import { ratiosOfTable } from './neighbours.ts';
 
 /** So many ratios of a column, and so many of them, must have a p of their own that follows. */
 const FEWEST = 3;
 const MOST_WITH_P = 0.9;
-const MOST_FOLLOWING = 0.75;
+const MOST_FOLLOWING = 0.7;
 
 /** What the columns of a table tell, asked once for all their rows. */
 const FOLLOWING = new WeakMap<Table, Map<number, boolean>>();
@@ -29,13 +29,17 @@ function followsDownColumn(reading: Reading, table: Table, column: number): bool
   const known = columns.get(column);
   if (known !== undefined) return known;
   const ratios = ratiosOfTable(reading, table).filter((ratio) =>
-    ratio.cell?.cell.column === column && ratio.interval !== undefined);
+    ratio.cell?.cell.column === column && hasSoundLimits(ratio));
   const withP = ratios.filter(({ p }) => p?.tests === 'result');
   const following = withP.filter(follows);
   const found = withP.length >= FEWEST && withP.length >= MOST_WITH_P * ratios.length
     && following.length >= MOST_FOLLOWING * withP.length;
   columns.set(column, found);
   return found;
+}
+
+function hasSoundLimits({ estimate, interval }: RatioResult): boolean {
+  return interval !== undefined && limitsStand(estimate, interval, 'binary');
 }
 
 function follows({ estimate, interval, p }: RatioResult): boolean {

@@ -19,26 +19,35 @@ interface CellCount {
  * those without missing values, or of another group.
  */
 export function countsInTable(sheet: Sheet): readonly Count[] {
+  const panels = Array.from({ length: sheet.grid.table.columnCount - 1 }, (_, at) =>
+    panelsIn(sheet, at + 1)).flat();
+  return panels.flatMap((panel) => withTotals(panel, panels));
+}
+
+/** The counts of a column, or of a part of it that has a size of its own. */
+interface Panel {
+  readonly cells: readonly CellCount[];
+  readonly size: Printed | undefined;
+}
+
+function panelsIn(sheet: Sheet, column: number): readonly Panel[] {
   const { grid, labels } = sheet;
-  const counts: Count[] = [];
-  for (let column = 1; column < grid.table.columnCount; column++) {
-    let size = headingSize(sheet, column);
-    let cells: CellCount[] = [];
-    for (let row = labels.headingRows; row < grid.table.rowCount; row++) {
-      const cell = grid.at(row, column);
-      if (cell?.row !== row || cell.column !== column) continue;
-      const items = sheet.itemsOf(cell);
-      const found = saysCounts(sheet, row, column) ? countIn(items, row, labels.group(row)) : undefined;
-      const other = found === undefined ? sizeIn(items) : undefined;
-      if (found !== undefined) cells.push(found);
-      // A second panel has sizes of its own.
-      if (other === undefined) continue;
-      counts.push(...withTotals(cells, size));
-      [size, cells] = [other, []];
-    }
-    counts.push(...withTotals(cells, size));
+  const panels: Panel[] = [];
+  let size = headingSize(sheet, column);
+  let cells: CellCount[] = [];
+  for (let row = labels.headingRows; row < grid.table.rowCount; row++) {
+    const cell = grid.at(row, column);
+    if (cell?.row !== row || cell.column !== column) continue;
+    const items = sheet.itemsOf(cell);
+    const found = saysCounts(sheet, row, column) ? countIn(items, row, labels.group(row)) : undefined;
+    const other = found === undefined ? sizeIn(items) : undefined;
+    if (found !== undefined) cells.push(found);
+    if (other === undefined) continue;
+    panels.push({ cells, size });
+    [size, cells] = [other, []];
   }
-  return counts;
+  panels.push({ cells, size });
+  return panels;
 }
 
 const PERCENTAGES = /%|per\s?cent/i;
@@ -100,20 +109,33 @@ function sizeIn(items: readonly Item[]): Printed | undefined {
 const MOST = 0.7;
 const FEWEST = 3;
 
-function withTotals(cells: readonly CellCount[], size: Printed | undefined): readonly Count[] {
-  const fitting = size === undefined ? [] : cells.filter((cell) => isOf(cell, size.value));
-  const isColumnwise = fitting.length >= FEWEST && fitting.length >= MOST * cells.length;
+function withTotals(panel: Panel, panels: readonly Panel[]): readonly Count[] {
+  const { cells, size } = panel;
+  const isColumnwise = fitsOwnSize(panel) || (cells.length < SEVERAL && fitTogether(panels));
   return cells.map((cell): Count => {
     const { count, percent, total } = cell;
     const span = cover(count.span, percent.span);
     if (total !== undefined) return { count, percent, total, span };
-    if (size === undefined || !isColumnwise || !isPlainlyOf(cell, cells, size.value)) {
+    if (size === undefined || !isColumnwise || !isPlainlyOf(cell, panel, panels)) {
       return { count, percent, span };
     }
     return { count, percent, total: size, span };
   });
 }
 
+function fitsOwnSize({ cells, size }: Panel): boolean {
+  if (size === undefined) return false;
+  const fitting = cells.filter((cell) => isOf(cell, size.value)).length;
+  return fitting >= FEWEST && fitting >= MOST * cells.length;
+}
+
+/** Whether nearly all cells of several short columns are of their column's size. */
+function fitTogether(panels: readonly Panel[]): boolean {
+  const sized = panels.flatMap(({ cells, size }) =>
+    (size === undefined ? [] : cells.map((cell) => isOf(cell, size.value))));
+  const fitting = sized.filter((fits) => fits).length;
+  return fitting >= SEVERAL && fitting >= NEARLY_ALL * sized.length;
+}
 /** Whether a count over a total can be printed as this percentage, give or take one last digit. */
 function isOf({ count, percent }: CellCount, total: number): boolean {
   const room = 1.01 * 10 ** -percent.decimals;
@@ -136,15 +158,30 @@ const SEVERAL = 6;
  * Whether a percentage can only be meant of the column's size. One of fewer people may leave
  * out those without a value, or be of a part; one of more people than there are cannot.
  */
-function isPlainlyOf(cell: CellCount, cells: readonly CellCount[], size: number): boolean {
-  if (isOf(cell, size)) return isExactly(cell, size);
+function isPlainlyOf(cell: CellCount, panel: Panel, panels: readonly Panel[]): boolean {
+  const { cells, size } = panel;
+  if (size === undefined) return false;
+  if (isOf(cell, size.value)) return isExactly(cell, size.value);
   const implied = (100 * cell.count.value) / cell.percent.value;
   if (!Number.isFinite(implied)) return false;
-  if (implied > size) return true;
+  if (implied > size.value) return true;
+  const isFar = implied < (1 - MOST_MISSING) * size.value && !sharesTotal(cell, cells);
+  return isFar && (standsOut(cell, panel) || standsOutOfRow(cell, panel, panels));
+}
+
+/** Whether nearly all the other cells of a long column are of its size. */
+function standsOut(cell: CellCount, { cells, size }: Panel): boolean {
   const others = cells.filter((other) => other !== cell);
-  const alike = others.filter((other) => isOf(other, size)).length;
-  const standsOut = others.length >= SEVERAL && alike >= NEARLY_ALL * others.length;
-  return standsOut && implied < (1 - MOST_MISSING) * size && !sharesTotal(cell, cells);
+  const alike = others.filter((other) => size !== undefined && isOf(other, size.value)).length;
+  return others.length >= SEVERAL && alike >= NEARLY_ALL * others.length;
+}
+
+/** Whether its row is of the columns' sizes everywhere else, as nearly all of the table is. */
+function standsOutOfRow(cell: CellCount, panel: Panel, panels: readonly Panel[]): boolean {
+  const beside = panels.flatMap(({ cells, size }, at) => (panels[at] === panel ? []
+    : cells.filter(({ row }) => row === cell.row).map((other) =>
+      size !== undefined && isExactly(other, size.value))));
+  return beside.length > 0 && beside.every((fits) => fits) && fitTogether(panels);
 }
 
 /** Whether the rows of a cell's group add up to a total of their own: 30 (50.0) and 30 (50.0). */

@@ -1,5 +1,5 @@
 import {
-  type Cell, cover, indexAt, type Inheritable, type Mark, type PValue, quote, type Result,
+  type Cell, cover, indexAt, type Inheritable, type Mark, type Printed, type PValue, quote, type Result,
 } from '../../model/index.ts';
 import type { Item } from '../parse/item.ts';
 import { A_RATIO, AN_AMOUNT, fitsNumbers } from '../resolve/naming.ts';
@@ -393,6 +393,11 @@ function precedes(inForce: readonly Heading[], column: number): boolean {
   return inForce[column - 1]?.p !== undefined && !isRatio(inForce[column - 2]);
 }
 
+/** Above 1 a number in a column of p-values is a slip only where it is printed as they are: "1.33". */
+function looksLikeP({ value, decimals }: Printed): boolean {
+  return value < 10 && decimals >= 2;
+}
+
 // 0.03   <0.001   = .02   p<0.05   0.003*
 function pIn(
   items: readonly Item[],
@@ -409,6 +414,6 @@ function pIn(
   const before = items[at - 1];
   const relation = (before?.kind === 'relation' ? before.relation : undefined) ?? '=';
   const { printed } = number;
-  if (printed.value > 1 && relation === '=') return undefined;
+  if (printed.value > 1 && relation === '=' && !looksLikeP(printed)) return undefined;
   return { relation, printed, tests, span: before === undefined ? printed.span : cover(before.span, printed.span) };
 }

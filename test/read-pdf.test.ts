@@ -2,6 +2,8 @@ import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { quote, type Manuscript } from '../src/model/index.ts';
 import { ReadError, readManuscript } from '../src/read/index.ts';
+import type { Draft } from '../src/read/pdf/draft.ts';
+import { withFigures } from '../src/read/pdf/figure-text.ts';
 import { restore } from '../src/read/pdf/substitutions.ts';
 import { expectWellFormed } from './read-invariants.ts';
 
@@ -170,12 +172,73 @@ describe('line numbers in the margin', () => {
   });
 });
 
+describe('tables that do not fit', () => {
+  // row 7 holds 1.07 (0.57, 2.07)
+  const ratioOf = (row: number): string =>
+    `1.${String(row).padStart(2, '0')} (0.${row + 50}, 2.${String(row).padStart(2, '0')})`;
+  const ratiosIn = ({ text, tables }: Manuscript): readonly string[] =>
+    tables.flatMap(({ cells }) =>
+      cells.filter(({ header, column }) => !header && column === 2).map(({ span }) => quote(text, span)),
+    );
+
+  test('are read when they are turned, with their heads and notes', async () => {
+    const manuscript = await readPdf('tables/turned.pdf');
+    expectWellFormed(manuscript);
+    expect(ratiosIn(manuscript)).toEqual([1, 2, 3, 4, 5, 6, 7, 8].map(ratioOf));
+    expect(manuscript.tables.map(({ label, notes }) => [label, notes.length])).toEqual([['Table 1', 1]]);
+    const box = manuscript.lines.find(({ page }) => page === 2)?.box;
+    expect(box?.height).toBeGreaterThan(box?.width ?? Infinity);
+  });
+
+  test('are read on over the next page, under the same label and with their heads', async () => {
+    const manuscript = await readPdf('tables/continued.pdf');
+    expectWellFormed(manuscript);
+    expect(ratiosIn(manuscript)).toEqual(Array.from({ length: 48 }, (_, i) => ratioOf(i + 1)));
+    expect(manuscript.tables.map(({ label }) => label)).toEqual(['Table 2', 'Table 2']);
+    const heads = manuscript.tables.map(({ cells }) => cells.filter(({ header }) => header).length);
+    expect(heads).toEqual([3, 3]);
+  });
+});
+
+describe('the text of a figure', () => {
+  const column = { phrases: [], left: 0, right: 200 };
+  const draft = (kind: Draft['kind'], words: string, right: number): Draft => ({
+    kind,
+    lines: [{ page: 1, column, phrases: [], words, left: 0, right, baseline: 0, size: 9, font: 'f', frame: { turns: 0 } }],
+  });
+  const kinds = (drafts: readonly Draft[]): readonly string[] => withFigures(drafts).map(({ kind }) => kind);
+  const prose = draft('paragraph', 'We asked everyone who lived in the towns.', 190);
+  const labels = [draft('heading', 'Ferry towns', 60), draft('paragraph', '0.03', 20), draft('paragraph', 'Years', 30)];
+
+  test('above its caption is set apart', () => {
+    expect(kinds([prose, ...labels, draft('caption', 'Figure 2. Towns', 90)]))
+      .toEqual(['paragraph', 'figure', 'figure', 'figure', 'caption']);
+  });
+
+  test('is not taken from headings, prose or tables', () => {
+    expect(kinds([prose, ...labels, draft('caption', 'Table 2. Towns', 90)])).not.toContain('figure');
+    expect(kinds([...labels.slice(0, 1), draft('caption', 'Figure 2. Towns', 90)])).not.toContain('figure');
+    expect(kinds([prose, prose, prose, draft('caption', 'Figure 2. Towns', 90)])).not.toContain('figure');
+  });
+});
+
+test('a Buffer of Node is read like any other bytes, in every form', async () => {
+  const forms = ['ferry-cohort.pdf', ...['txt', 'docx', 'html', 'tex', 'md', 'xml'].map((form) => `ferry-cohort/manuscript.${form}`)];
+  for (const form of forms) {
+    const buffer = readFileSync(new URL(form, FIXTURES));
+    const before = Buffer.from(buffer);
+    const { text } = await readManuscript(buffer, form);
+    expect(text).toContain('2.18');
+    expect(buffer.equals(before)).toBe(true);
+  }
+});
+
 describe('a PDF that cannot be read', () => {
   test.each([
     ['password.pdf', 'protected by a password', 'without one'],
     ['damaged.pdf', 'damaged or incomplete', 'print it to a new PDF'],
     ['scan.pdf', 'holds no text', 'text recognition'],
-    ['picture.pdf', 'named .pdf but is a PNG picture', 'as PDF'],
+    ['picture.pdf', 'named .pdf but is a PNG picture', 'or PDF'],
     ['empty.pdf', 'empty', 'saved or downloaded'],
     ['no-pages.pdf', 'no pages', 'Export it again'],
     ['text.pdf', 'named .pdf but is plain text', 'Rename it'],

@@ -22,8 +22,10 @@ interface OpenBlock {
   readonly kind: BlockKind;
   readonly section: Section;
   readonly start: number;
-  /** Whether a space is due before the next word. */
-  spaceDue: boolean;
+  /** Whether nothing was written yet since the block, its line or its cell began. */
+  fresh: boolean;
+  /** The space that is due before the next word; it is dropped where none comes. */
+  due: string;
 }
 
 /** An empty manuscript, to be written into. */
@@ -42,7 +44,7 @@ function append(composition: Composition, text: string): void {
 export function openBlock(composition: Composition, kind: BlockKind, section: Section): void {
   closeBlock(composition);
   if (composition.length > 0) append(composition, '\n\n');
-  composition.open = { kind, section, start: composition.length, spaceDue: false };
+  composition.open = { kind, section, start: composition.length, fresh: true, due: '' };
 }
 
 /** Ends the block that is open; one without a word in it leaves no trace. */
@@ -50,9 +52,25 @@ export function closeBlock(composition: Composition): void {
   const { open } = composition;
   composition.open = undefined;
   if (open === undefined || composition.length === open.start) return;
-  const span = { start: open.start, end: composition.length };
+  const span = { start: open.start, end: endOfWords(composition, open.start) };
+  if (span.end === span.start) return;
   composition.blocks.push({ kind: open.kind, section: open.section, span });
 }
+
+/** Where the last word ends: a table's last cells may be empty. */
+function endOfWords({ parts, length }: Composition, start: number): number {
+  let end = length;
+  for (let at = parts.length - 1; at >= 0 && end > start; at--) {
+    const part = parts[at] as string;
+    const words = part.trimEnd();
+    end -= part.length - words.length;
+    if (words !== '') break;
+  }
+  return Math.max(end, start);
+}
+
+/** Spaces beyond these are layout: some markup is pushed into place by hundreds of them. */
+const WIDEST_GAP = 16;
 
 /**
  * Writes into the open block. White space in markup is no text: any run of it,
@@ -60,16 +78,14 @@ export function closeBlock(composition: Composition): void {
  */
 export function write(composition: Composition, text: string): void {
   const { open } = composition;
-  if (open === undefined) return;
-  const words = text.replace(/[ \t\r\n]+/g, ' ');
-  if (words === '') return;
-  const begins = composition.length === open.start;
-  if (words.startsWith(' ') && !begins) open.spaceDue = true;
-  const trimmed = words.trim();
-  if (trimmed === '') return;
-  if (open.spaceDue && !begins) append(composition, ' ');
-  append(composition, trimmed);
-  open.spaceDue = words.endsWith(' ');
+  if (open === undefined || text === '') return;
+  const joined = (open.due + text).replace(/[ \t\r\n]+/g, ' ');
+  const words = open.fresh ? joined.trimStart() : joined;
+  const body = words.trimEnd();
+  open.due = words.slice(body.length, body.length + WIDEST_GAP);
+  if (body === '') return;
+  append(composition, body);
+  open.fresh = false;
 }
 
 /** Begins a new line within the open block, as a line break in a cell does. */
@@ -77,14 +93,15 @@ export function breakLine(composition: Composition): void {
   const { open } = composition;
   if (open === undefined || composition.length === open.start) return;
   append(composition, '\n');
-  open.spaceDue = false;
+  [open.due, open.fresh] = ['', true];
 }
 
 /** Parts a cell from the one before by a tab, which keeps their numbers apart. */
 export function separateCells(composition: Composition): void {
-  if (composition.open === undefined) return;
+  const { open } = composition;
+  if (open === undefined || composition.length === open.start) return;
   append(composition, '\t');
-  composition.open.spaceDue = false;
+  [open.due, open.fresh] = ['', true];
 }
 
 /** The text that was written since a place. */
@@ -93,29 +110,30 @@ export function textSince({ parts, length }: Composition, start: number): string
   let from = length;
   for (let at = parts.length - 1; at >= 0 && from > start; at--) {
     const part = parts[at] as string;
-    words.unshift(part);
+    words.push(part);
     from -= part.length;
   }
-  return words.join('');
+  return words.reverse().join('');
 }
 
 /** Records that what was written since `start` is raised or lowered. */
 export function markSince(composition: Composition, kind: Mark['kind'], start: number): void {
-  const isParted = textSince(composition, start).startsWith(' ');
-  const from = isParted ? start + 1 : start;
+  const written = textSince(composition, start);
+  const from = start + written.length - written.trimStart().length;
   if (composition.length > from) {
     composition.marks.push({ kind, span: { start: from, end: composition.length } });
   }
 }
 
-/** Puts a table's cells, written row by row, into their grid. */
+/** Puts a table's cells, written row by row, into their grid. Empty ones only keep their place. */
 export function closeTable(
   composition: Composition,
   label: string,
   caption: Span | undefined,
   cells: readonly WrittenCell[],
 ): void {
-  const { cells: placed, rowCount, columnCount } = placeCells(cells);
+  const { cells: all, rowCount, columnCount } = placeCells(cells);
+  const placed = all.filter(({ cell }) => cell.span.end > cell.span.start);
   const [first, last] = [placed[0], placed.at(-1)];
   if (first === undefined || last === undefined) return;
   composition.tables.push({

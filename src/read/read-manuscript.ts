@@ -1,5 +1,5 @@
 import type { Format, Manuscript } from '../model/index.ts';
-import { decode } from './decode.ts';
+import { decode, type Decoded } from './decode.ts';
 import type { PdfHost } from './pdf/pdf-host.ts';
 import { ReadError } from './read-error.ts';
 import { recognise } from './recognise.ts';
@@ -54,20 +54,41 @@ async function readAs(
       return readTextFile(bytes, name);
     case 'jats': {
       const { readJats } = await import('./jats/read-jats.ts');
-      return readJats(decode(bytes).text, name);
+      return withNotices(decode(bytes), (text) => readJats(text, name));
     }
-    case 'docx':
-    case 'html':
-    case 'latex':
-    case 'markdown':
-      throw new ReadError(notYet(format));
+    case 'docx': {
+      const { readDocx } = await import('./docx/read-docx.ts');
+      return readDocx(bytes, name);
+    }
+    case 'html': {
+      const { readHtml } = await import('./html/read-html.ts');
+      return withNotices(decode(bytes), (text) => readHtml(text, name));
+    }
+    case 'latex': {
+      const { readLatex } = await import('./latex/read-latex.ts');
+      return withNotices(decode(bytes), (text) => readLatex(text, name));
+    }
+    case 'markdown': {
+      const { readMarkdown } = await import('./markdown/read-markdown.ts');
+      return withNotices(decode(bytes), (text) => readMarkdown(text, name));
+    }
     default:
       return format satisfies never;
   }
 }
 
+/** What had to be guessed of the characters is told before what was found in reading. */
+function withNotices(
+  { text, notices }: Decoded,
+  read: (text: string) => Manuscript,
+): Manuscript {
+  const manuscript = read(text);
+  return { ...manuscript, notices: [...notices, ...manuscript.notices] };
+}
+
 function readTextFile(bytes: Uint8Array, name: string): Manuscript {
-  const { text, notices } = decode(bytes);
+  const decoded = decode(bytes);
+  const { text } = decoded;
   if (/\.pdf$/i.test(name)) {
     throw new ReadError(
       'The file is named .pdf but is plain text. ' +
@@ -77,8 +98,7 @@ function readTextFile(bytes: Uint8Array, name: string): Manuscript {
   if (text.trim() === '') {
     throw new ReadError('The file holds no text but blanks. Check that it was saved completely.');
   }
-  const manuscript = readText(text, name);
-  return { ...manuscript, notices: [...notices, ...manuscript.notices] };
+  return withNotices(decoded, () => readText(text, name));
 }
 
 function tooLarge(size: number, limit: number): string {
@@ -92,18 +112,7 @@ function megabytes(bytes: number): string {
 
 function notAManuscript(what: string, name: string): string {
   const named = /\.pdf$/i.test(name) ? 'The file is named .pdf but is' : 'The file is';
-  const next = 'Save the manuscript as PDF from the program that wrote it, or paste its text.';
+  const next =
+    'Save the manuscript as .docx or PDF from the program that wrote it, or paste its text.';
   return `${named} ${what}, which cannot be read as a manuscript. ${next}`;
-}
-
-const NAMES: Readonly<Record<Exclude<Format, 'text' | 'pdf' | 'jats'>, string>> = {
-  docx: 'Word (.docx)',
-  html: 'HTML',
-  latex: 'LaTeX source',
-  markdown: 'Markdown',
-};
-
-function notYet(format: keyof typeof NAMES): string {
-  const what = `The file is ${NAMES[format]}, which cannot be read yet`;
-  return `${what}; PDF and plain text can. Save it as PDF, or paste its text into a .txt file.`;
 }

@@ -15,7 +15,7 @@ const SIGNATURES: readonly (readonly [what: string, bytes: readonly (number | un
   ['a TIFF picture', [0x49, 0x49, 0x2a, 0x00]],
   ['a TIFF picture', [0x4d, 0x4d, 0x00, 0x2a]],
   ['a WebP picture', [0x52, 0x49, 0x46, 0x46, undefined, undefined, undefined, undefined, 0x57]],
-  ['an old Word document (.doc)', [0xd0, 0xcf, 0x11, 0xe0]],
+  ['an old Word document (.doc), or one locked with a password', [0xd0, 0xcf, 0x11, 0xe0]],
   ['a rich text document (.rtf)', [0x7b, 0x5c, 0x72, 0x74, 0x66]],
   ['a compressed file (gzip)', [0x1f, 0x8b]],
 ];
@@ -31,6 +31,9 @@ export function recognise(bytes: Uint8Array, name: string): Recognised {
   if (signature !== undefined) return { kind: 'other', what: signature[0] };
   if (ascii.includes('%PDF-')) return manuscript('pdf');
   if (ascii.startsWith('PK\x03\x04')) return recogniseArchive(bytes, name);
+  if (/<office:document\b/.test(ascii)) {
+    return { kind: 'other', what: 'an OpenDocument text (.fodt)' };
+  }
   return manuscript(markupIn(ascii) ?? markupNamed(name) ?? 'text');
 }
 
@@ -46,7 +49,7 @@ function recogniseArchive(bytes: Uint8Array, name: string): Recognised {
   const entries = new TextDecoder('latin1').decode(
     bytes.subarray(Math.max(0, bytes.length - 65_536)),
   );
-  if (entries.includes('word/document.xml')) return manuscript('docx');
+  if (/word\/document\d*\.xml/.test(entries)) return manuscript('docx');
   if (/\.docx$/i.test(name)) return manuscript('docx');
   if (/\.odt$/i.test(name)) return { kind: 'other', what: 'an OpenDocument text (.odt)' };
   return { kind: 'other', what: 'a zip archive' };
@@ -66,10 +69,15 @@ function markupNamed(name: string): Format | undefined {
   switch (ending) {
     case 'md':
     case 'markdown':
+    case 'rmd':
+    case 'qmd':
       return 'markdown';
     case 'tex':
+    case 'ltx':
+    case 'latex':
       return 'latex';
     case 'htm':
+    case 'xhtml':
     case 'html':
       return 'html';
     case 'xml':

@@ -1,6 +1,6 @@
-import { Parser } from 'htmlparser2';
 import type { Manuscript } from '../../model/index.ts';
 import { finished, write } from '../composition.ts';
+import { readMarkup } from '../markup.ts';
 import { isLayout, PASSED_OVER } from './elements.ts';
 import { closeInTable, openInTable } from './in-table.ts';
 import { closeInText, openInText } from './in-text.ts';
@@ -15,17 +15,12 @@ import { type Attributes, type Reading, startReading } from './reading.ts';
  */
 export function readJats(xml: string, name: string): Manuscript {
   const reading = startReading();
-  const parser = new Parser(
-    {
-      onopentag: (tag, attributes) => openTag(reading, tag, attributes),
-      ontext: (text) => writeText(reading, text),
-      onclosetag: (tag) => closeTag(reading, tag),
-    },
-    { xmlMode: true, decodeEntities: true },
-  );
-  parser.write(xml);
-  parser.end();
-  return finished(reading.composition, name, 'jats');
+  const notices = readMarkup(xml, 'xml', {
+    open: (tag, attributes) => openTag(reading, tag, attributes),
+    text: (text) => writeText(reading, text),
+    close: (tag) => closeTag(reading, tag),
+  });
+  return { ...finished(reading.composition, name, 'jats'), notices };
 }
 
 function openTag(reading: Reading, tag: string, attributes: Attributes): void {

@@ -1,27 +1,15 @@
 import type { Cell, Line, Mark, Span } from '../../model/index.ts';
 import type { GridCell } from '../grid.ts';
-import type { Unsectioned } from '../sections.ts';
+import type { WrittenBlock } from '../table-surroundings.ts';
 import type { Draft, DraftGrid, Placed } from './draft.ts';
 import { isSpaced, type Phrase } from './phrase.ts';
 import { isInCells } from './table-region.ts';
 import { boxOf, type TextLine } from './text-line.ts';
 
-/** A table's cells once they stand in the text. */
-export interface ComposedGrid {
-  readonly cells: readonly Cell[];
-  readonly rowCount: number;
-  readonly columnCount: number;
-}
-
-/** A block with its offsets; a table with its grid, where one was recovered. */
-export interface ComposedBlock extends Unsectioned {
-  readonly grid?: ComposedGrid;
-}
-
 /** The whole text with everything that points into it. */
 export interface Composed {
   readonly text: string;
-  readonly blocks: readonly ComposedBlock[];
+  readonly blocks: readonly WrittenBlock[];
   readonly lines: readonly Line[];
   readonly marks: readonly Mark[];
 }
@@ -93,7 +81,7 @@ function writePhrase(sheet: Sheet, line: TextLine, phrase: Phrase): void {
   } else sheet.lines.push({ line, phrases: [phrase], start, end: sheet.length });
 }
 
-function writeLines(sheet: Sheet, { kind, lines, label }: Draft): readonly ComposedBlock[] {
+function writeLines(sheet: Sheet, { kind, lines, label }: Draft): readonly WrittenBlock[] {
   const start = sheet.length;
   for (const [i, line] of lines.entries()) {
     if (i > 0) write(sheet, '\n');
@@ -108,15 +96,15 @@ function writeLines(sheet: Sheet, { kind, lines, label }: Draft): readonly Compo
 }
 
 /** A label and the paragraph it is run into; a label alone on its line is the whole heading. */
-function withLabel({ start, end }: Span, label: number): readonly ComposedBlock[] {
+function withLabel({ start, end }: Span, label: number): readonly WrittenBlock[] {
   const split = Math.min(end, start + label);
-  const heading: ComposedBlock = { kind: 'heading', span: { start, end: split }, runIn: true };
+  const heading: WrittenBlock = { kind: 'heading', span: { start, end: split }, runIn: true };
   return split + 1 >= end
     ? [heading]
     : [heading, { kind: 'paragraph', span: { start: split + 1, end } }];
 }
 
-function writeGrid(sheet: Sheet, { kind }: Draft, { rows, columnCount }: DraftGrid): ComposedBlock {
+function writeGrid(sheet: Sheet, { kind }: Draft, { rows, columnCount }: DraftGrid): WrittenBlock {
   const start = sheet.length;
   const cells: Cell[] = [];
   for (const [i, row] of rows.entries()) {

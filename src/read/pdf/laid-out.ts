@@ -3,6 +3,7 @@ import { bodyTypeOf, type BodyType } from './body-type.ts';
 import { columnsOf, pageGutter, type Column, type Gutter } from './columns.ts';
 import type { NumberOf } from './compose.ts';
 import type { Draft } from './draft.ts';
+import { withFigures } from './figure-text.ts';
 import { furnitureOf } from './furniture.ts';
 import { phrasesOf, type Phrase } from './phrase.ts';
 import { numberAt, withoutPrintedNumbers, type NumberFile } from './printed-numbers.ts';
@@ -31,7 +32,7 @@ export function laidOut(pages: readonly DrawnPage[]): LaidOut {
   const divided = dividedPages(pages);
   const body = bodyTypeOf(divided.flatMap(({ columns }) => columns.flat()));
   const drafts = withTitle(
-    divided.flatMap((page) => draftsOf(page, body)),
+    divided.flatMap((page) => withFigures(draftsOf(page, body))),
     body,
   );
   const files = new Map(divided.map(({ page, files }) => [page.number, files]));

@@ -19,7 +19,7 @@ const DAMAGED =
 export async function openPdf(bytes: Uint8Array, host: PdfHost): Promise<OpenPdf> {
   const pdfjs = (await host.load()) as Pick<typeof PdfJs, 'getDocument'>;
   const task = pdfjs.getDocument({
-    data: new Uint8Array(bytes), // a copy, and a plain one: pdf.js takes the array away from its owner
+    data: new Uint8Array(bytes), // a copy and no Buffer: pdf.js takes it away from its owner
     verbosity: 0,
     isEvalSupported: false,
     enableXfa: false,

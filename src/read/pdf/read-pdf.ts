@@ -1,18 +1,10 @@
 import type { PDFDocumentProxy } from 'pdfjs-dist';
-import {
-  quote,
-  type Line,
-  type Manuscript,
-  type Notice,
-  type Page,
-  type Span,
-  type Table,
-} from '../../model/index.ts';
-import { captionLabel, labelsTable } from '../captions.ts';
+import type { Line, Manuscript, Notice, Page } from '../../model/index.ts';
 import { ReadError } from '../read-error.ts';
 import type { ReadOptions } from '../read-manuscript.ts';
 import { withSections } from '../sections.ts';
-import { compose, type Composed, type ComposedBlock } from './compose.ts';
+import { tablesAmong } from '../table-surroundings.ts';
+import { compose, type Composed } from './compose.ts';
 import { drawnPage } from './drawn-page.ts';
 import { laidOut } from './laid-out.ts';
 import { openPdf } from './open-pdf.ts';
@@ -85,7 +77,7 @@ function manuscriptOf(name: string, { pages: drawn, notices }: Drawn): Manuscrip
     format: 'pdf',
     text,
     blocks: withSections(text, composed.blocks),
-    tables: tablesOf(text, composed.blocks),
+    tables: tablesAmong(text, composed.blocks),
     lines: composed.lines,
     pages: pagesOf(pages, composed),
     marks: composed.marks,
@@ -157,62 +149,4 @@ function firstLines(lines: readonly Line[]): ReadonlyMap<number, number> {
   const starts = new Map<number, number>();
   for (const { page = 0, span } of lines) if (!starts.has(page)) starts.set(page, span.start);
   return starts;
-}
-
-function tablesOf(text: string, blocks: readonly ComposedBlock[]): readonly Table[] {
-  const captions = tableCaptions(text, blocks);
-  return blocks.flatMap(({ kind, span, grid }, i) => {
-    if (kind !== 'table' || grid === undefined) return [];
-    return [{ span, ...(captions.get(i) ?? { label: '' }), notes: notesAfter(blocks, i), ...grid }];
-  });
-}
-
-type Captioned = Pick<Table, 'label' | 'caption'>;
-
-/**
- * The caption of each table, by its block's index. A journal sets all captions
- * above its tables or all below: whichever way gives more tables one of their own.
- */
-function tableCaptions(
-  text: string,
-  blocks: readonly ComposedBlock[],
-): ReadonlyMap<number, Captioned> {
-  const above = captionsAt(text, blocks, [-1, -2]);
-  const below = captionsAt(text, blocks, [1, 2, 3]);
-  return below.size > above.size ? below : new Map([...below, ...above]);
-}
-
-function captionsAt(
-  text: string,
-  blocks: readonly ComposedBlock[],
-  steps: readonly number[],
-): Map<number, Captioned> {
-  const found = new Map<number, Captioned>();
-  const used = new Set<ComposedBlock>();
-  for (const [i, { kind }] of blocks.entries()) {
-    if (kind !== 'table') continue;
-    const caption = captionBeside(blocks, i, steps);
-    if (caption?.kind !== 'caption' || used.has(caption)) continue;
-    const label = captionLabel(quote(text, caption.span));
-    if (labelsTable(label)) found.set(i, { label, caption: caption.span });
-    used.add(caption);
-  }
-  return found;
-}
-
-/** The first caption on one side of a table, with no other table between. */
-function captionBeside(
-  blocks: readonly ComposedBlock[],
-  i: number,
-  steps: readonly number[],
-): ComposedBlock | undefined {
-  const beside = steps.flatMap((step) => blocks[i + step] ?? []);
-  return beside.find(({ kind }) => kind === 'caption' || kind === 'table' || kind === 'heading');
-}
-
-function notesAfter(blocks: readonly ComposedBlock[], i: number): readonly Span[] {
-  const notes: Span[] = [];
-  for (let j = i + 1; blocks[j]?.kind === 'note'; j++)
-    notes.push((blocks[j] as ComposedBlock).span);
-  return notes;
 }

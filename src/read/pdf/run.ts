@@ -55,6 +55,7 @@ export function boxOnPage(
   right: number,
   bottom: number,
 ): Box {
+  if (turns === 0) return { x: left, y: top, width: right - left, height: bottom - top };
   const xs = [left, right].flatMap((u) =>
     [top, bottom].map((v) => u * COS[turns] - v * SIN[turns]),
   );

@@ -3,9 +3,8 @@ import {
   cannotTell,
   defineManuscriptRule,
   disagrees,
-  type Judgement,
+  judgeSayings,
   type Saying,
-  sayings,
   type Verdict,
 } from '../src/authoring.ts';
 
@@ -32,10 +31,7 @@ export default defineManuscriptRule({
   grade: 'discrepancy',
 
   judge(reading) {
-    return sayings(reading, OF_FIT).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeFit(saying);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    return judgeSayings(reading, OF_FIT, judgeFit);
   },
 
   comment: (words, { because }) => `

@@ -5,6 +5,7 @@ import {
   disagrees,
   flowing,
   type Judgement,
+  judgeSayings,
   quote,
   type Reading,
   type Saying,
@@ -33,10 +34,7 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
-    const found = sayings(reading, MULTIVARIATE).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeWord(saying, reading);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    const found = judgeSayings(reading, MULTIVARIATE, (saying) => judgeWord(saying, reading));
     const plain = sayings(reading, /\bmultivariable\b/gi)[0];
     const stands: readonly Judgement[] = found.length > 0 || plain === undefined ? []
       : [{ verdict: agrees, span: plain.span, marks: [plain.span] }];

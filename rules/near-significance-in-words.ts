@@ -3,11 +3,10 @@ import {
   defineManuscriptRule,
   disagrees,
   flowing,
-  type Judgement,
+  judgeSayings,
   quote,
   type Reading,
   type Saying,
-  sayings,
   toldOnce,
   type Verdict,
 } from '../src/authoring.ts';
@@ -33,10 +32,7 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
-    const found = sayings(reading, NEARLY).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeWords(saying, reading);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    const found = judgeSayings(reading, NEARLY, (saying) => judgeWords(saying, reading));
     return toldOnce(reading, found);
   },
 

@@ -3,9 +3,8 @@ import {
   cannotTell,
   defineManuscriptRule,
   disagrees,
-  type Judgement,
+  judgeSayings,
   type Saying,
-  sayings,
   type Verdict,
 } from '../src/authoring.ts';
 
@@ -31,10 +30,7 @@ export default defineManuscriptRule({
 
   judge(reading) {
     const margin = reading.manuscript.text.match(MARGIN)?.[0];
-    return sayings(reading, SHOWN).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeConclusion(saying, margin);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    return judgeSayings(reading, SHOWN, (saying) => judgeConclusion(saying, margin));
   },
 
   comment: (words, { because }) => `

@@ -3,9 +3,8 @@ import {
   cannotTell,
   defineManuscriptRule,
   disagrees,
-  type Judgement,
+  judgeSayings,
   type Saying,
-  sayings,
   type Verdict,
 } from '../src/authoring.ts';
 
@@ -29,10 +28,7 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
-    return sayings(reading, OVERLAP).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeOverlap(saying);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    return judgeSayings(reading, OVERLAP, judgeOverlap);
   },
 
   comment: (words, { because }) => `

@@ -4,6 +4,7 @@ import {
   disagrees,
   flowing,
   type Judgement,
+  judgeSayings,
   quote,
   type Reading,
   type Saying,
@@ -32,10 +33,7 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
-    const found = sayings(reading, ON_A_SIDE).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeP(saying, reading);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    const found = judgeSayings(reading, ON_A_SIDE, (saying) => judgeP(saying, reading));
     const exact = sayings(reading, EXACT)[0];
     const stands: readonly Judgement[] = found.length > 0 || exact === undefined ? []
       : [{ verdict: agrees, span: exact.span, marks: [exact.span] }];

@@ -3,9 +3,8 @@ import {
   cannotTell,
   defineManuscriptRule,
   disagrees,
-  type Judgement,
+  judgeSayings,
   type Saying,
-  sayings,
   type Verdict,
 } from '../src/authoring.ts';
 
@@ -31,10 +30,7 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
-    return sayings(reading, EXPLAINED).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeMeaning(saying);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    return judgeSayings(reading, EXPLAINED, judgeMeaning);
   },
 
   comment: (words, { because }) => `

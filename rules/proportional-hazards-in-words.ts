@@ -3,9 +3,8 @@ import {
   cannotTell,
   defineManuscriptRule,
   disagrees,
-  type Judgement,
+  judgeSayings,
   type Saying,
-  sayings,
   type Verdict,
 } from '../src/authoring.ts';
 
@@ -30,10 +29,7 @@ export default defineManuscriptRule({
   grade: 'caution',
 
   judge(reading) {
-    return sayings(reading, PROPORTIONAL).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeSaying(saying);
-      return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    return judgeSayings(reading, PROPORTIONAL, judgeSaying);
   },
 
   comment: (words, { because }) => `

@@ -3,9 +3,8 @@ import {
   cannotTell,
   defineManuscriptRule,
   disagrees,
-  type Judgement,
+  judgeSayings,
   type Saying,
-  sayings,
   type Verdict,
 } from '../src/authoring.ts';
 
@@ -28,10 +27,7 @@ export default defineManuscriptRule({
   grade: 'contradiction',
 
   judge(reading) {
-    return sayings(reading, SHARE).flatMap((saying): readonly Judgement[] => {
-      const verdict = judgeShare(saying);
-      return [{ verdict, span: saying.span, marks: [saying.span] }];
-    });
+    return judgeSayings(reading, SHARE, judgeShare);
   },
 
   comment: (words, { because }) => `

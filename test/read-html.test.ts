@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { describePlace, type Manuscript, placeOf, quote } from '../src/model/index.ts';
 import { ReadError, readManuscript } from '../src/read/index.ts';
@@ -115,6 +116,19 @@ describe('damaged or hostile markup', () => {
     ['spaces by the thousand', `<p>OR${'&nbsp;'.repeat(20_000)}</p><p>OR 1.59</p>`],
   ])('%s is read as far as it goes', async (_, body) => {
     expect((await read(body)).text).toContain('OR 1.59');
+  });
+
+  test('gives a well-formed manuscript, whatever it is', async () => {
+    const pieces = fc.constantFrom(
+      '<p>', '</p>', '<b>', '<sup>', '</sup>', '<table>', '</table>', '<tr>', '<td>', '<td colspan=2>',
+      '<td rowspan=3>', '<th>', '<caption>', '</caption>', '<figure>', '<figcaption>', '</figure>', '<h1>',
+      '</h2>', '<br>', '&nbsp;', 'OR 1.59 ', '<thead>', '<tfoot>', '<pre>\n a', '</pre>', '<li>', '<msup>',
+    );
+    await fc.assert(
+      fc.asyncProperty(fc.array(pieces, { maxLength: 40 }), async (parts) => {
+        await read(`Begins.${parts.join('')}`);
+      }),
+    );
   });
 
   test('that lies too deep says so', async () => {

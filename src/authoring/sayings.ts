@@ -1,6 +1,6 @@
 import {
   type Block, indexAt, type Judgement, quote, type Reading, type Result, type SectionRole,
-  type Span,
+  type Span, type Verdict,
 } from '../model/index.ts';
 import { flowing } from './wording.ts';
 
@@ -35,6 +35,18 @@ export function sayings({ manuscript }: Reading, pattern: RegExp): readonly Sayi
         parts: match.slice(1),
       };
     });
+  });
+}
+
+/** What a rule has to say of each saying, marked where it stands; nothing where it has nothing. */
+export function judgeSayings(
+  reading: Reading,
+  pattern: RegExp,
+  judge: (saying: Saying) => Verdict | undefined,
+): readonly Judgement[] {
+  return sayings(reading, pattern).flatMap((saying) => {
+    const verdict = judge(saying);
+    return verdict === undefined ? [] : [{ verdict, span: saying.span, marks: [saying.span] }];
   });
 }
 

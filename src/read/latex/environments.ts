@@ -20,7 +20,10 @@ export function beginEnvironment(reading: Reading): void {
   if (!isReading(reading)) return;
   const isFormula = FORMULAS.has(name);
   if (!isFormula && reading.table === undefined && !FLOATS.has(name)) endParagraph(reading);
-  if (FLOATS.has(name)) openFloat(reading, FLOATS.get(name) ?? 'Table');
+  if (FLOATS.has(name)) {
+    endTo(reading, '$');
+    openFloat(reading, FLOATS.get(name) ?? 'Table');
+  }
   if (starred === 'tabular*') readArgument(source, 2000);
   readArguments(source, TABLES.get(name) ?? ENVIRONMENT_ARGUMENTS.get(name) ?? 'o');
   openNamed(reading, { kind: isFormula ? 'math' : 'plain' }, name);
@@ -64,7 +67,12 @@ export function endEnvironment(reading: Reading): void {
     reading.ended = true;
     return;
   }
-  closeNamed(reading, name, (ended) => endNamed(reading, ended));
+  endTo(reading, name);
+}
+
+/** Ends the innermost environment or formula of a name with all in it; false where none is open. */
+export function endTo(reading: Reading, name: string): boolean {
+  return closeNamed(reading, name, endNamed);
 }
 
 /** Ends everything that is still open at the end of the source. */
@@ -72,12 +80,16 @@ export function endAll(reading: Reading): void {
   for (let group = reading.groups.at(-1); group !== undefined; group = reading.groups.at(-1)) {
     const { environment } = group;
     if (environment === undefined) closeGroup(reading);
-    else closeNamed(reading, environment, (ended) => endNamed(reading, ended));
+    else endTo(reading, environment);
   }
   endParagraph(reading);
 }
 
+/** What opens a formula without a name: $, $$, \\( and \\[. */
+const FORMULA_SIGN = /^[$([]/;
+
 function endNamed(reading: Reading, name: string): void {
+  if (FORMULA_SIGN.test(name)) return;
   if (TABLES.has(name)) endTable(reading);
   if (FLOATS.has(name)) closeFloat(reading);
   else if (FORMULAS.has(name)) say(reading, ' ');

@@ -49,19 +49,19 @@ export function openNamed(reading: Reading, role: Role, name: string): void {
 
 /**
  * Ends the group of a name, and with it the groups in it that were not ended.
- * False where none of that name is open. `onEnd` is told each name that ends.
+ * False where none of that name is open. `onEnd` does what the end of each name asks for.
  */
 export function closeNamed(
   reading: Reading,
   name: string,
-  onEnd: (name: string) => void = () => {},
+  onEnd: (reading: Reading, name: string) => void,
 ): boolean {
   if ((reading.environments.get(name) ?? 0) === 0) return false;
   for (let ended: string | undefined; ended !== name && reading.groups.length > 0;) {
     ended = reading.groups.at(-1)?.environment;
     if (ended !== undefined) {
       reading.environments.set(ended, (reading.environments.get(ended) ?? 1) - 1);
-      onEnd(ended);
+      onEnd(reading, ended);
     }
     closeGroup(reading);
   }

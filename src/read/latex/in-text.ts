@@ -1,7 +1,7 @@
 import { ACCENTS, CHARACTERS } from './characters.ts';
 import { COMMANDS, LOOKS } from './commands.ts';
-import { beginEnvironment, endEnvironment } from './environments.ts';
-import { closeNamed, expectArguments, openNamed } from './groups.ts';
+import { beginEnvironment, endEnvironment, endTo } from './environments.ts';
+import { expectArguments, openNamed } from './groups.ts';
 import { endRepeated, nextRow, ruleIn, spanCell } from './in-table.ts';
 import { expansion, type Macro, readDefinition, readPlainDefinition } from './macros.ts';
 import { citation } from './numbering.ts';
@@ -78,8 +78,8 @@ const SPECIAL: Readonly<Record<string, Obeying>> = {
   right: (reading) => passDelimiter(reading),
   '(': (reading) => openNamed(reading, { kind: 'math' }, '('),
   '[': (reading) => openNamed(reading, { kind: 'math' }, '['),
-  ')': (reading) => void closeNamed(reading, '('),
-  ']': (reading) => void closeNamed(reading, '['),
+  ')': (reading) => void endTo(reading, '('),
+  ']': (reading) => void endTo(reading, '['),
   twocolumn: readAcross,
 };
 

@@ -4,8 +4,8 @@ import { ReadError } from '../read-error.ts';
 import type { Inline } from '../told.ts';
 import { printedMath, printedText } from './characters.ts';
 import { FLOATS } from './commands.ts';
-import { endAll } from './environments.ts';
-import { closeGroup, closeNamed, openGroup, openNamed } from './groups.ts';
+import { endAll, endTo } from './environments.ts';
+import { closeGroup, openGroup, openNamed } from './groups.ts';
 import { nextCell } from './in-table.ts';
 import { obey } from './in-text.ts';
 import { numberingOf } from './numbering.ts';
@@ -48,8 +48,9 @@ function take(reading: Reading, token: Exclude<Token, { kind: 'end' }>): void {
     reading.pending = reading.pending.slice(1);
     openGroup(reading, role);
     if (token.kind === 'open') return;
+    const depth = reading.groups.length;
     takePlain(reading, token);
-    closeGroup(reading);
+    if (reading.groups.length >= depth) closeGroup(reading); // the token may have ended it
   } else {
     reading.pending = [];
     takePlain(reading, token);
@@ -58,7 +59,7 @@ function take(reading: Reading, token: Exclude<Token, { kind: 'end' }>): void {
 
 /** What may stand as an argument without braces: `x^2`, `\frac12`. */
 function isArgument(token: Token): boolean {
-  if (token.kind === 'command') return !/^(?:begin|end|par|\\|item)$/.test(token.name);
+  if (token.kind === 'command') return !/^(?:begin|end|par|item|[\\)\]])$/.test(token.name);
   return token.kind === 'text';
 }
 
@@ -104,14 +105,14 @@ function takePlain(reading: Reading, token: Exclude<Token, { kind: 'end' }>): vo
 }
 
 function toggleMath(reading: Reading, sign: string): void {
-  if (closeNamed(reading, sign)) {
+  if (endTo(reading, sign)) {
     if (sign === '$$') say(reading, ' ');
   } else openNamed(reading, { kind: 'math' }, sign);
 }
 
 /** A formula in a line ends with its paragraph, whether or not it was closed. */
 function breakParagraph(reading: Reading): void {
-  closeNamed(reading, '$');
+  endTo(reading, '$');
   if (reading.passedOver === 0) endParagraph(reading);
 }
 

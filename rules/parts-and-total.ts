@@ -9,6 +9,7 @@ import {
   type Judgement,
   partsAndTotal,
   type Printed,
+  range,
   spansOf,
   type TableCells,
   type Verdict,
@@ -226,8 +227,4 @@ function judgeSum({ parts, total, confirmed, tally }: Sum): Verdict {
       ? [`${-found.difference} may be in none of the parts, for instance without a value.`]
       : [],
   });
-}
-
-function range(from: number, to: number): readonly number[] {
-  return Array.from({ length: Math.max(0, to - from) }, (_, at) => from + at);
 }

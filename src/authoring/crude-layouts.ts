@@ -5,7 +5,7 @@ import { riskRatio } from '../stats/risk-ratio.ts';
 import { unrounded } from '../stats/rounding.ts';
 import type { TwoByTwo } from '../stats/two-by-two.ts';
 import { ratiosOfTable } from './neighbours.ts';
-import { cellsOf, type TableCells, type Whole } from './table-cells.ts';
+import { cellsOf, range, type TableCells, type Whole } from './table-cells.ts';
 
 /** A printed ratio with the four counts that stand for it in its table. */
 export interface RatioWithCounts {
@@ -239,8 +239,4 @@ function tableOf(exposed: Group, unexposed: Group): ReturnType<Layout> {
     },
     printed: [...exposed.printed, ...unexposed.printed],
   };
-}
-
-function range(from: number, to: number): readonly number[] {
-  return Array.from({ length: Math.max(0, to - from) }, (_, at) => from + at);
 }

@@ -18,9 +18,8 @@ const FOLLOWING = new WeakMap<Table, Map<number, boolean>>();
 export function hasPOfItsRow(reading: Reading, { cell, p }: RatioResult): boolean {
   if (cell === undefined || p === undefined) return false;
   const { table, cell: { row, column } } = cell;
-  const inRow = table.cells.some((other) =>
+  return followsDownColumn(reading, table, column) && table.cells.some((other) =>
     other.row === row && other.rowSpan === 1 && contains(other.span, p.span));
-  return inRow && followsDownColumn(reading, table, column);
 }
 
 function followsDownColumn(reading: Reading, table: Table, column: number): boolean {

@@ -141,3 +141,8 @@ function sizeIn(heading: string): number | undefined {
   const found = heading.match(SIZE)?.[1];
   return found === undefined ? undefined : Number(found.replace(/\D/g, ''));
 }
+
+/** The rows or columns from one up to, and not with, another: range(1, 3) is 1, 2. */
+export function range(from: number, to: number): readonly number[] {
+  return Array.from({ length: Math.max(0, to - from) }, (_, at) => from + at);
+}

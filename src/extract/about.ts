@@ -87,7 +87,8 @@ function continuesName(token: Token | undefined, isFirst: boolean): boolean {
   return token.kind === 'word' && !ENDS.has(token.word) && !QUANTITIES.has(token.word);
 }
 
-function wordsAt(text: string, span: Span): string {
+/** The words of a span in one line. */
+export function wordsAt(text: string, span: Span): string {
   return quote(text, span).replace(/\s+/g, ' ');
 }
 

@@ -1,5 +1,5 @@
-import { type Prevalence, type Printed, quote, type Span } from '../model/index.ts';
-import { nounPhrase } from './about.ts';
+import type { Prevalence, Printed, Span } from '../model/index.ts';
+import { nounPhrase, wordsAt } from './about.ts';
 import type { Token } from './token.ts';
 
 const SHARES = new Set(['prevalence', 'incidence', 'proportion', 'frequency', 'rate', 'risk']);
@@ -130,8 +130,4 @@ function isUnexposed(tokens: readonly Token[], at: number): boolean {
     }
   }
   return false;
-}
-
-function wordsAt(text: string, span: Span): string {
-  return quote(text, span).replace(/\s+/g, ' ');
 }
